@@ -1,0 +1,167 @@
+package main
+
+import (
+	"fmt"
+	"strconv"
+	"strings"
+
+	"github.com/goccy/go-json"
+)
+
+// A problem is a bench-net-1 file: columns, all in SI.
+type problem struct {
+	Format   string  `json:"format"`
+	Name     string  `json:"name"`
+	End      float64 `json:"t_end"`
+	DtOut    float64 `json:"dt_out"`
+	TRef     float64 `json:"T_ref"`
+	Boundary struct {
+		T []float64 `json:"T"`
+	} `json:"boundary"`
+	Node struct {
+		C0, C1, T0 []float64
+	} `json:"node"`
+	Link struct {
+		A []int     `json:"a"`
+		B []int     `json:"b"`
+		G []float64 `json:"G"`
+	} `json:"link"`
+	Conv struct {
+		Node []int     `json:"node"`
+		Bnd  []int     `json:"bnd"`
+		A    []float64 `json:"A"`
+		H0   []float64 `json:"h0"`
+		H1   []float64 `json:"h1"`
+	} `json:"conv"`
+	Rad struct {
+		Node []int     `json:"node"`
+		Bnd  []int     `json:"bnd"`
+		EA   []float64 `json:"eA"`
+	} `json:"rad"`
+	Heat struct {
+		Node  []int     `json:"node"`
+		Share []float64 `json:"share"`
+	} `json:"heat"`
+	Segment struct {
+		T, P0, P1, V0, V1 []float64
+	} `json:"segment"`
+	Mech  json.RawMessage `json:"mech"`
+	Probe []int           `json:"probe"`
+}
+
+// readProblem decodes a bench-net-1 file.
+func readProblem(text []byte) (*problem, error) {
+	p := &problem{}
+	if err := json.Unmarshal(text, p); err != nil {
+		return nil, fmt.Errorf("reading the problem: %w", err)
+	}
+	if p.Format != "bench-net-1" {
+		return nil, fmt.Errorf("the format %q is not bench-net-1", p.Format)
+	}
+	if len(p.Mech) > 0 {
+		return nil, fmt.Errorf("%s has a mechanical part, which the netlist cannot say yet", p.Name)
+	}
+	return p, nil
+}
+
+// A writer builds a netlist's text.
+type writer struct {
+	strings.Builder
+	first bool
+}
+
+func (w *writer) section(name string, open bool) {
+	if open {
+		fmt.Fprintf(w, ",\n%q: {", name)
+		w.first = true
+		return
+	}
+	w.WriteString("\n}")
+}
+
+func (w *writer) entry(format string, args ...any) {
+	if !w.first {
+		w.WriteByte(',')
+	}
+	w.first = false
+	w.WriteString("\n")
+	fmt.Fprintf(w, format, args...)
+}
+
+func num(x float64) string { return strconv.FormatFloat(x, 'g', -1, 64) }
+
+// netlist writes the problem as a netlist.
+func (p *problem) netlist() []byte {
+	w := &writer{}
+	fmt.Fprintf(w, "{\"workheat\": 1, \"title\": %q", p.Name)
+	w.section("signals", true)
+	w.entry(`"speed": %s`, p.table(p.Segment.V0, p.Segment.V1, "m/s"))
+	w.entry(`"power": %s`, p.table(p.Segment.P0, p.Segment.P1, "W"))
+	w.section("signals", false)
+	w.section("nodes", true)
+	for i := range p.Node.C0 {
+		w.entry(`"n%d": {"heat capacity": %s, "start": "%s K"}`, i, p.capacity(i), num(p.Node.T0[i]))
+	}
+	for i, t := range p.Boundary.T {
+		w.entry(`"b%d": {"held": "%s K"}`, i, num(t))
+	}
+	w.section("nodes", false)
+	w.section("conductances", true)
+	for k := range p.Link.G {
+		w.entry(`"l%d": {"kind": "conduction", "between": ["n%d", "n%d"], "value": "%s W/K"}`, k, p.Link.A[k], p.Link.B[k], num(p.Link.G[k]))
+	}
+	for k := range p.Conv.A {
+		moving := ""
+		if p.Conv.H1[k] != 0 {
+			moving = fmt.Sprintf(`, "speed coefficient": "%s W/(m^2 K)", "speed exponent": 0.8, "speed": {"signal": "speed"}`, num(p.Conv.H1[k]))
+		}
+		w.entry(`"c%d": {"kind": "convection", "between": ["n%d", "b%d"], "area": "%s m^2", "coefficient": "%s W/(m^2 K)"%s}`,
+			k, p.Conv.Node[k], p.Conv.Bnd[k], num(p.Conv.A[k]), num(p.Conv.H0[k]), moving)
+	}
+	for k := range p.Rad.EA {
+		w.entry(`"r%d": {"kind": "radiation", "between": ["n%d", "b%d"], "emissivity": 1, "area": "%s m^2"}`, k, p.Rad.Node[k], p.Rad.Bnd[k], num(p.Rad.EA[k]))
+	}
+	w.section("conductances", false)
+	p.sources(w)
+	fmt.Fprintf(w, ",\n\"duty\": [{\"rest\": {\"for\": \"%s s\"}}]}\n", num(p.End))
+	return []byte(w.String())
+}
+
+// sources writes the heat that goes into the nodes: shares of one power.
+func (p *problem) sources(w *writer) {
+	if len(p.Heat.Node) == 0 {
+		return
+	}
+	w.section("sources", true)
+	for k := range p.Heat.Node {
+		w.entry(`"h%d": {"kind": "given heat", "into": "n%d", "factor": %s, "power": {"signal": "power"}}`, k, p.Heat.Node[k], num(p.Heat.Share[k]))
+	}
+	w.section("sources", false)
+}
+
+// capacity writes C0 (1 + c1 (T - Tref)) as a table wide enough for any of the problems.
+func (p *problem) capacity(i int) string {
+	c0, c1 := p.Node.C0[i], p.Node.C1[i]
+	if c1 == 0 {
+		return fmt.Sprintf(`"%s J/K"`, num(c0))
+	}
+	const width = 4000 // K
+	return fmt.Sprintf(`{"table": [["%s K", "%s J/K"], ["%s K", "%s J/K"]]}`, num(p.TRef), num(c0), num(p.TRef+width), num(c0*(1+c1*width)))
+}
+
+// table writes a drive that is linear within each segment and may jump between them.
+func (p *problem) table(start, end []float64, unit string) string {
+	var b strings.Builder
+	b.WriteString(`{"table": [`)
+	for k := range start {
+		if k == 0 || start[k] != end[k-1] {
+			fmt.Fprintf(&b, `["%s s", "%s %s"], `, num(p.Segment.T[k]), num(start[k]), unit)
+		}
+		fmt.Fprintf(&b, `["%s s", "%s %s"]`, num(p.Segment.T[k+1]), num(end[k]), unit)
+		if k+1 < len(start) {
+			b.WriteString(", ")
+		}
+	}
+	b.WriteString("]}")
+	return b.String()
+}

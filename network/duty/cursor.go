@@ -1,0 +1,212 @@
+package duty
+
+import "math"
+
+// A Cursor walks through a program leg by leg; since a leg may end early at a temperature, each next leg
+// is planned from where the last one really ended.
+type Cursor struct {
+	program *Program
+	time    float64
+	speed   float64
+	stack   []frame
+	leg     Leg
+	late    float64
+	kinds   map[kindKey]int
+}
+
+// A frame is a list of phases being gone through.
+type frame struct {
+	phases []Phase
+	next   int
+	repeat *Phase
+	round  int     // which time through, from zero
+	start  float64 // of this round
+	begin  *Phase
+}
+
+type kindKey struct {
+	phase *Phase
+	rest  bool
+}
+
+// NewCursor returns a cursor at the start of a program.
+func NewCursor(p *Program) *Cursor {
+	c := &Cursor{program: p, kinds: map[kindKey]int{}}
+	c.stack = []frame{{phases: p.Phases}}
+	c.speed = startSpeed(p.Phases)
+	return c
+}
+
+// startSpeed returns the speed at which a duty begins: what its first phase says.
+func startSpeed(phases []Phase) float64 {
+	if len(phases) == 0 {
+		return 0
+	}
+	switch p := &phases[0]; p.Verb {
+	case Repeat:
+		return startSpeed(p.Phases)
+	case Brake, SpeedUp:
+		if Given(p.From) {
+			return p.From
+		}
+	case Hold:
+		if Given(p.Speed) {
+			return p.Speed
+		}
+	case Follow:
+		return p.Trace.Y[0]
+	}
+	return 0
+}
+
+// Next plans the next leg. It returns false at the end of the program. The leg is valid until the call
+// after the next; Done must be called before.
+func (c *Cursor) Next() (*Leg, bool) {
+	for len(c.stack) > 0 {
+		f := &c.stack[len(c.stack)-1]
+		if f.next < len(f.phases) {
+			p := &f.phases[f.next]
+			f.next++
+			if p.Verb == Repeat {
+				c.stack = append(c.stack, frame{phases: p.Phases, repeat: p, start: c.time})
+				continue
+			}
+			c.plan(p)
+			return &c.leg, true
+		}
+		if f.repeat == nil {
+			c.stack = c.stack[:len(c.stack)-1]
+			continue
+		}
+		if c.closeRound(f) {
+			return &c.leg, true
+		}
+	}
+	return nil, false
+}
+
+// closeRound ends a round of a repeat: what remains of its interval becomes a leg at the present speed.
+// It reports whether there is such a leg.
+func (c *Cursor) closeRound(f *frame) bool {
+	next := c.time
+	if Given(f.repeat.Every) {
+		next = f.start + f.repeat.Every
+		slack := 1e-9 * f.repeat.Every
+		if c.time < next-slack {
+			c.fill(f.repeat, next)
+			return true
+		}
+		if c.time > next+slack {
+			c.late += c.time - next
+			next = c.time
+		}
+	}
+	f.round++
+	f.next, f.start = 0, next
+	if f.round >= f.repeat.Count {
+		c.stack = c.stack[:len(c.stack)-1]
+	}
+	return false
+}
+
+// Done tells the cursor when the leg has ended.
+func (c *Cursor) Done(t float64) {
+	if len(c.leg.Motions) > 0 {
+		c.speed = c.leg.Speed(t)
+		if p := c.leg.phase; p != nil && t == c.leg.End && (p.Verb == Brake || p.Verb == SpeedUp) {
+			c.speed = p.To // free of rounding
+		}
+	}
+	c.time = t
+}
+
+// Round returns how often the innermost repeat has been begun, from one; zero outside of repeats.
+func (c *Cursor) Round() int {
+	for i := len(c.stack) - 1; i >= 0; i-- {
+		if c.stack[i].repeat != nil {
+			return c.stack[i].round + 1
+		}
+	}
+	return 0
+}
+
+func (c *Cursor) begin(label string, p *Phase, rest bool) *Leg {
+	key := kindKey{p, rest}
+	if _, ok := c.kinds[key]; !ok {
+		c.kinds[key] = len(c.kinds)
+	}
+	c.leg = Leg{Label: label, Kind: c.kinds[key], Start: c.time, Late: c.late, Motions: c.leg.Motions[:0]}
+	c.late = 0
+	return &c.leg
+}
+
+// fill plans what remains of a repeat's interval.
+func (c *Cursor) fill(p *Phase, end float64) {
+	l := c.begin(p.Label+", rest of the interval", p, true)
+	l.End = end
+	if c.program.Vehicle != nil {
+		l.Motions = ramp(l.Motions, road(c.program.Vehicle, None), c.time, end, c.speed, 0)
+	}
+}
+
+// plan lays out the leg of a phase from the present time and speed.
+func (c *Cursor) plan(p *Phase) {
+	l := c.begin(p.Label, p, false)
+	l.Until, l.phase = p.Until, p
+	duration, acceleration := c.shape(p)
+	l.End = c.time + duration
+	if c.program.Vehicle == nil {
+		return
+	}
+	base := road(c.program.Vehicle, p.Grade)
+	switch {
+	case p.Verb == Follow:
+		l.Motions = c.follow(l.Motions, base, p)
+	case p.Verb == Brake && Given(p.Torque):
+		base.T0, base.T1, base.v0 = c.time, l.End, c.speed
+		base.coast = newCoast(&base, p.Torque/c.program.Vehicle.Wheel, c.speed)
+		base.braked = true
+		l.Motions = append(l.Motions, base)
+	default:
+		l.Motions = ramp(l.Motions, base, c.time, l.End, c.speed, acceleration)
+	}
+}
+
+// shape returns how long a phase takes at most from the present speed, and its acceleration.
+func (c *Cursor) shape(p *Phase) (duration, acceleration float64) {
+	switch p.Verb {
+	case Brake:
+		if Given(p.Torque) {
+			base := road(c.program.Vehicle, p.Grade)
+			duration, _ = newCoast(&base, p.Torque/c.program.Vehicle.Wheel, c.speed).time(p.To)
+			return duration, 0
+		}
+		return (c.speed - p.To) / p.Deceleration, -p.Deceleration
+	case SpeedUp:
+		if Given(p.In) {
+			return p.In, (p.To - c.speed) / p.In
+		}
+		return (p.To - c.speed) / p.Acceleration, p.Acceleration
+	case Follow:
+		return p.Trace.X[len(p.Trace.X)-1] - p.Trace.X[0], 0
+	}
+	duration = math.Inf(1)
+	for _, t := range [...]float64{p.For, p.AtMost, p.Over / c.speed} {
+		if Given(t) {
+			duration = math.Min(duration, t)
+		}
+	}
+	return duration, 0
+}
+
+// follow appends the ramps of a trace.
+func (c *Cursor) follow(list []Motion, base Motion, p *Phase) []Motion {
+	x, y := p.Trace.X, p.Trace.Y
+	for i := 1; i < len(x); i++ {
+		if x[i] > x[i-1] {
+			t0, t1 := c.time+(x[i-1]-x[0]), c.time+(x[i]-x[0])
+			list = ramp(list, base, t0, t1, y[i-1], (y[i]-y[i-1])/(t1-t0))
+		}
+	}
+	return list
+}

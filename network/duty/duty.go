@@ -1,0 +1,94 @@
+// Package duty is what the network has to live through: phases that move the vehicle and pass the time,
+// their end conditions, and the signals that they give to the elements.
+package duty
+
+import (
+	"math"
+
+	"workheat/network/element"
+)
+
+// Gravity is the standard acceleration of free fall, m/s^2 (exact by convention).
+const Gravity = 9.80665
+
+// None marks a number that was not given.
+var None = math.NaN()
+
+// Given reports whether a number was given.
+func Given(x float64) bool { return !math.IsNaN(x) }
+
+// A Verb says what a phase does.
+type Verb int
+
+// The verbs.
+const (
+	Repeat  Verb = iota // go through the inner phases again and again
+	Brake               // slow down from the present speed
+	SpeedUp             // gain speed
+	Hold                // keep the speed
+	Rest                // stand still
+	Follow              // follow a speed trace
+)
+
+var verbNames = [...]string{"repeat", "brake", "speed up", "hold", "rest", "follow"}
+
+func (v Verb) String() string { return verbNames[v] }
+
+// A Phase is one entry of a duty. Numbers that were not given are None.
+type Phase struct {
+	Verb  Verb
+	Label string // where it stands: "2.1 brake" is the first phase inside the second entry
+	Place int    // for the reader: which place in the file it came from
+
+	From, To     float64 // m/s
+	Deceleration float64 // m/s^2, positive
+	Torque       float64 // N m, of all brakes together
+	Acceleration float64 // m/s^2
+	In           float64 // s, time in which the speed is gained
+	Speed        float64 // m/s
+	Grade        float64 // rise over run
+	For          float64 // s
+	Over         float64 // m
+	AtMost       float64 // s, longest time when Until is given
+	Until        *Until
+	Trace        *element.Curve // m/s over s, from zero
+
+	Count  int // of a repeat
+	Every  float64
+	Phases []Phase
+}
+
+// An Until ends a phase when a node's temperature passes a value.
+type Until struct {
+	Node        int
+	Falls       bool // from above; else it rises
+	Temperature float64
+}
+
+// A Program is a whole duty. The vehicle is nil when nothing moves.
+type Program struct {
+	Phases  []Phase
+	Vehicle *element.Vehicle
+}
+
+// A Leg is a stretch of the duty with one motion plan: a phase, or the rest of a repeat's interval.
+type Leg struct {
+	Label   string
+	Kind    int     // legs of equal kind have the same drive up to their place in time
+	Start   float64 // s
+	End     float64 // s, at the latest
+	Until   *Until
+	Motions []Motion // cover Start to End; empty when nothing moves
+	Late    float64  // s by which a repeat's interval had to be lengthened before this leg
+	phase   *Phase
+}
+
+// Speed returns the vehicle's speed at a time within the leg.
+func (l *Leg) Speed(t float64) float64 {
+	for i := range l.Motions {
+		if m := &l.Motions[i]; t <= m.T1 || i == len(l.Motions)-1 {
+			return m.Speed(t)
+		}
+	}
+	return 0
+}

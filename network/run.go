@@ -1,0 +1,305 @@
+package network
+
+import (
+	"context"
+	"fmt"
+	"math"
+
+	"workheat/integrators/ode"
+	"workheat/network/duty"
+	"workheat/network/element"
+	"workheat/network/energy"
+	"workheat/network/record"
+	"workheat/network/unit"
+)
+
+// A runner carries one run through its duty.
+type runner struct {
+	model   *Model
+	result  *Result
+	system  ode.System
+	integ   *ode.Integrator
+	cursor  *duty.Cursor
+	y       []float64
+	t       float64
+	first   map[segmentKind]float64 // accepted first steps by kind of segment
+	legs    []energy.Leg
+	account duty.Account
+	observe ode.Observer
+	started bool
+
+	// What tests may break on purpose; nil in every real run.
+	dropEvents bool
+	dropBreaks bool
+}
+
+// A segmentKind tells segments with the same drive, up to their place in time.
+type segmentKind struct{ leg, motion, part int }
+
+// Run runs the duty. It always returns a result: an interrupted or failed run keeps what it had.
+func (m *Model) Run(ctx context.Context, opt Options) *Result {
+	r := newRunner(m, opt, nil)
+	return r.run(ctx, opt)
+}
+
+// newRunner prepares a run. wrap, if not nil, stands between the integrator and the system.
+func newRunner(m *Model, opt Options, wrap func(ode.System) ode.System) *runner {
+	rel, abs := opt.Rel, opt.Abs
+	if rel == 0 {
+		rel = m.Net.Rel
+	}
+	if abs == 0 {
+		if abs = m.Net.Abs; opt.Rel != 0 {
+			abs = opt.Rel
+		}
+	}
+	p := m.system.Problem()
+	if wrap != nil {
+		p.System = wrap(p.System)
+	}
+	r := &runner{
+		model: m, first: map[segmentKind]float64{}, cursor: duty.NewCursor(&m.Net.Duty),
+		integ: ode.New(p, method, ode.Tolerance{Rel: rel, Abs: abs}), y: make([]float64, p.N),
+	}
+	r.result = &Result{
+		Model: m, Method: method.Name(), Rel: rel, Abs: abs, Nodes: m.recordNodes(),
+		Tape: record.NewTape(p.N, method.Degree()),
+	}
+	r.observe = func(s *ode.Step, dense func([]float64)) {
+		dense(r.result.Tape.Add(s.T, s.H, len(r.result.Segments)-1))
+	}
+	m.system.Start(r.y)
+	return r
+}
+
+// run goes through the legs and closes the result.
+func (r *runner) run(ctx context.Context, opt Options) *Result {
+	for {
+		leg, ok := r.cursor.Next()
+		if !ok {
+			break
+		}
+		if leg.Late > 0 {
+			r.warn("%s begins %.3g s late: what comes before takes longer than its interval", leg.Label, leg.Late)
+		}
+		end, done := r.leg(ctx, leg)
+		r.cursor.Done(end)
+		if opt.Progress != nil {
+			opt.Progress(r.t, leg.Label)
+		}
+		if !done {
+			break
+		}
+	}
+	res := r.result
+	res.End = r.t
+	res.Stats = r.integ.Stats()
+	r.summarise()
+	r.rangeWarnings()
+	if opt.Audit && res.Tape.Steps() > 0 {
+		res.Book = r.book()
+	}
+	if opt.Tolerance && res.Book != nil && res.Failure == nil && !res.Interrupted {
+		r.toleranceCheck(ctx)
+	}
+	return res
+}
+
+func (r *runner) warn(format string, args ...any) {
+	text := fmt.Sprintf(format, args...)
+	for _, w := range r.result.Warnings {
+		if w == text {
+			return
+		}
+	}
+	r.result.Warnings = append(r.result.Warnings, text)
+}
+
+// leg runs one leg and returns when it ended; done is false when the run must stop.
+func (r *runner) leg(ctx context.Context, leg *duty.Leg) (end float64, done bool) {
+	record := energy.Leg{Label: leg.Label, Start: leg.Start, End: leg.Start, Node: -1}
+	var events []ode.Event
+	if u := leg.Until; u != nil {
+		record.Node, record.Falls, record.Target = u.Node, u.Falls, u.Temperature
+		e := r.event(u)
+		if r.started && e.Value(r.t, r.y) >= 0 { // the mark has been passed before
+			r.legs = append(r.legs, record)
+			return leg.Start, true
+		}
+		if !r.dropEvents {
+			events = []ode.Event{e}
+		}
+	}
+	reason := r.motions(ctx, leg, events)
+	record.End, record.Ended = r.t, reason == ode.Passed
+	for i := range leg.Motions {
+		if x := leg.Motions[i].T1; x <= r.t {
+			record.Corners = append(record.Corners, x)
+		}
+	}
+	r.legs = append(r.legs, record)
+	if u := leg.Until; u != nil && reason == ode.Reached {
+		r.warn("%s: the longest time passed before %s came to %s", leg.Label, r.model.Net.Nodes[u.Node].Name, unit.Temperature.Format(u.Temperature, 4))
+	}
+	return r.t, reason == ode.Reached || reason == ode.Passed
+}
+
+// event returns the event that a node's temperature passes a mark.
+func (r *runner) event(u *duty.Until) ode.Event {
+	n := r.result.Nodes[u.Node]
+	sign := 1.0
+	if u.Falls {
+		sign = -1
+	}
+	value := func(t float64, y []float64) float64 {
+		if n.State < 0 {
+			return sign * (n.Given.At(t) - u.Temperature)
+		}
+		return sign * (n.Temperature(y[n.State]) - u.Temperature)
+	}
+	return ode.Event{Name: n.Name, Value: value, Accuracy: math.Max(1e-9, r.result.Abs)}
+}
+
+// motions runs the motions of a leg, each cut at the breaks of the tables.
+func (r *runner) motions(ctx context.Context, leg *duty.Leg, events []ode.Event) ode.Reason {
+	if len(leg.Motions) == 0 {
+		return r.stretch(ctx, leg, 0, nil, leg.End, events)
+	}
+	for i := range leg.Motions {
+		m := leg.Motions[i] // a copy: the leg is used again
+		end := m.T1
+		if i == len(leg.Motions)-1 {
+			end = leg.End
+		}
+		from := r.t
+		reason := r.stretch(ctx, leg, i, &m, end, events)
+		r.account.Add(m.Account(from, r.t))
+		if reason != ode.Reached {
+			return reason
+		}
+	}
+	return ode.Reached
+}
+
+// stretch runs one motion to its end, with a restart at every break of a table.
+func (r *runner) stretch(ctx context.Context, leg *duty.Leg, index int, m *duty.Motion, end float64, events []ode.Event) ode.Reason {
+	for part := 0; r.t < end; part++ {
+		stop := end
+		if !r.dropBreaks {
+			stop = r.model.signals.NextBreak(r.t, end)
+		}
+		if reason := r.segment(ctx, leg, segmentKind{leg.Kind, index, part}, m, stop, events); reason != ode.Reached {
+			return reason
+		}
+	}
+	return ode.Reached
+}
+
+// segment runs to the next break, within which everything is smooth.
+func (r *runner) segment(ctx context.Context, leg *duty.Leg, kind segmentKind, m *duty.Motion, end float64, events []ode.Event) ode.Reason {
+	res := r.result
+	res.Segments = append(res.Segments, record.Segment{
+		Start: r.t, End: end, Label: leg.Label, Round: r.cursor.Round(), First: kind.motion == 0 && kind.part == 0,
+	})
+	res.motions = append(res.motions, motion{r.t, end, m})
+	r.model.signals.Enter(r.t, end, m)
+	r.model.system.Restart()
+	if f := r.integ.Restart(r.t, r.y); f != nil {
+		res.Failure = f
+		return ode.Failed
+	}
+	r.started = true
+	stop := r.integ.Run(ctx, end, r.first[kind], events, r.observe)
+	r.t = stop.T
+	copy(r.y, r.integ.State())
+	res.Segments[len(res.Segments)-1].End = r.t
+	if stop.First > 0 && stop.First < 0.99*(end-res.Segments[len(res.Segments)-1].Start) {
+		r.first[kind] = stop.First
+	}
+	switch stop.Reason {
+	case ode.Failed:
+		res.Failure = stop.Failure
+	case ode.Interrupted:
+		res.Interrupted = true
+	}
+	return stop.Reason
+}
+
+// summarise reads the summaries in the order of the netlist.
+func (r *runner) summarise() {
+	for _, i := range r.model.Net.Order {
+		r.result.Summary = append(r.result.Summary, record.Summarise(r.result.Tape, r.result.Nodes[i]))
+	}
+}
+
+// rangeWarnings looks, at the end of every step, for laws and materials used outside their range.
+func (r *runner) rangeWarnings() {
+	tape, sys := r.result.Tape, r.model.system
+	y := make([]float64, tape.States())
+	seen := map[int]bool{}
+	for k := 0; k < tape.Steps(); k++ {
+		start, h, segment, coef := tape.Step(k)
+		for i := range y {
+			y[i] = tape.Value(coef, i, 1)
+		}
+		r.result.enter(segment)
+		sys.Ranges(sys.State(start+h, y, nil), func(path int, text string) {
+			if !seen[path] {
+				seen[path] = true
+				r.warn("%s: %s, first at %.4g s", sys.Paths[path].Element, text, start+h)
+			}
+		})
+		if !sys.HasRanges() {
+			break
+		}
+	}
+	for j, i := range r.model.Net.Order {
+		r.materialWarning(i, r.result.Summary[j])
+	}
+}
+
+// materialWarning says when a node has left the range of its material's data.
+func (r *runner) materialWarning(i int, s record.Summary) {
+	m := r.model.Net.Material[i]
+	if m == nil || m.Capacity == nil {
+		return
+	}
+	const slack = 20 // K below the range that the end value surely serves
+	if s.Highest > m.High {
+		r.warn("%s: the heat capacity of %s is known up to %s; above it the end value %.4g J/(kg K) was used", s.Name, m.Name,
+			unit.Temperature.Format(m.High, 4), m.Capacity.At(m.High))
+	}
+	if low := math.Min(s.Start, s.End); low < m.Low-slack {
+		r.warn("%s: the heat capacity of %s is known from %s; below it the end value %.4g J/(kg K) was used", s.Name, m.Name,
+			unit.Temperature.Format(m.Low, 4), m.Capacity.At(m.Low))
+	}
+}
+
+// enter sets the signals to those of a recorded segment.
+func (res *Result) enter(segment int) {
+	m := res.motions[segment]
+	res.Model.signals.Enter(m.start, m.end, m.plan)
+	res.Model.system.Restart()
+}
+
+// toleranceCheck runs again at a tenth of the tolerance and books the change of the peaks.
+func (r *runner) toleranceCheck(ctx context.Context) {
+	res := r.result
+	finer := r.model.Run(ctx, Options{Rel: res.Rel / 10, Abs: res.Abs / 10})
+	if finer.Failure != nil || finer.Interrupted {
+		r.warn("the run at a tenth of the tolerance did not come to its end")
+		return
+	}
+	var names []string
+	var highest, fine []float64
+	rise := 0.0
+	for i, s := range res.Summary {
+		names = append(names, s.Name)
+		highest, fine = append(highest, s.Highest), append(fine, finer.Summary[i].Highest)
+		rise = math.Max(rise, s.Highest-s.Start)
+	}
+	res.Book.AddTolerance(names, highest, fine, 100*(res.Abs+res.Rel*rise))
+}
+
+// meter reports whether a path only measures a dissipator's work.
+func meter(p element.Path) bool { return p.A == element.Outside && p.B == element.Outside }
