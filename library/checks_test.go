@@ -145,6 +145,25 @@ func TestConductionWarnsOutsideItsMaterial(t *testing.T) {
 	}
 }
 
+// A vehicle is made from what was written, and from the defaults of what was not.
+func TestRoadVehicle(t *testing.T) {
+	cases := []struct {
+		fields map[string]string
+		want   element.Vehicle
+	}{
+		{map[string]string{"mass": "2.1 t"}, element.Vehicle{Mass: 2100, Rotating: 1, Air: 1.204}},
+		{map[string]string{"mass": "1500 kg", "rotating mass factor": "1.1", "rolling resistance": "1.2 %", "drag area": "0.7 m^2",
+			"air density": "1.1 kg/m^3", "grade": "-6 %", "wheel radius": "310 mm"},
+			element.Vehicle{Mass: 1500, Rotating: 1.1, Rolling: 0.012, DragArea: 0.7, Air: 1.1, Grade: -0.06, Wheel: 0.31}},
+	}
+	for _, k := range cases {
+		kind, d, _ := declare(t, library.Catalogue(), sample{element.Bodies, "road vehicle", k.fields, nil, nil})
+		if got := kind.Vehicle(d); got != k.want {
+			t.Errorf("%v: got %+v, want %+v", k.fields, got, k.want)
+		}
+	}
+}
+
 // The catalogue's own names are what its finders return.
 func TestCatalogueFindsItsRows(t *testing.T) {
 	c := library.Catalogue()

@@ -104,7 +104,7 @@ var (
 	glow         = sample{element.Conductances, "radiation", map[string]string{"emissivity": "0.6", "area": "0.1 m^2"}, []int{ambient, core}, nil}
 	glowInside   = sample{element.Conductances, "radiation", map[string]string{"emissivity": "0.6", "area": "0.1 m^2"}, []int{core, lining}, nil}
 	rubbing      = sample{element.Dissipators, "friction pad", map[string]string{"slows": "van", "part of braking": "0.3"}, []int{face, lining}, []float64{0.9, 0.1}}
-	heater       = sample{element.Sources, "given heat", map[string]string{"power": "heating"}, []int{oil}, nil}
+	heater       = sample{element.Sources, "given heat", map[string]string{"power": "heating"}, []int{oil}, []float64{1}}
 	wetted       = sample{element.Conductances, "contact", map[string]string{"coefficient": "500 W/(m^2 K)", "area": "0.03 m^2"}, []int{lining, oil}, nil}
 	inflow       = sample{element.Conductances, "stream", nil, []int{sump, oil}, nil}
 	outflow      = sample{element.Conductances, "stream", nil, []int{oil, sump}, nil}
@@ -122,7 +122,7 @@ func point(s *assembly.System) (at float64, y []float64) {
 
 // matrix returns the slopes of the balances as a full matrix, with the capacities and the slopes by time.
 func matrix(s *assembly.System) (full [][]float64, d, ft []float64) {
-	n, at := s.States(), 0.0
+	n := s.States()
 	at, y := point(s)
 	pattern := s.Pattern()
 	a := make([]float64, pattern.NNZ())

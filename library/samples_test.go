@@ -47,7 +47,8 @@ var samples = []sample{
 	{element.Conductances, "vent-passage convection", map[string]string{"outer diameter": "300 mm", "inner diameter": "170 mm", "passage width": "9 mm", "outlet width": "17 mm", "passage height": "12 mm", "passage length": "70 mm", "area": "0.1 m^2", "speed of": "van", "wheel radius": "300 mm"}, []int{2, 3}, nil},
 	{element.Conductances, "radiation", map[string]string{"emissivity": "0.55", "area": "0.1 m^2"}, []int{0, 3}, nil},
 	{element.Conductances, "radiation", map[string]string{"emissivity": "80 %", "area": "120 cm^2", "view factor": "0.4", "factor": "2"}, []int{1, 0}, nil},
-	{element.Sources, "given heat", map[string]string{"power": "heating"}, []int{2}, nil},
+	{element.Sources, "given heat", map[string]string{"power": "heating"}, []int{2}, []float64{1}},
+	{element.Sources, "given heat", map[string]string{"power": "heating", "factor": "1.4"}, []int{0, 3}, []float64{0.25, 0.75}},
 	{element.Dissipators, "friction pad", map[string]string{"slows": "van", "part of braking": "0.34"}, []int{0, 1}, []float64{0.94, 0.06}},
 	{element.Dissipators, "friction pad", map[string]string{"slows": "van", "part of braking": "12 %"}, []int{2}, []float64{1}},
 }

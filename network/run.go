@@ -22,7 +22,7 @@ type runner struct {
 	cursor  *duty.Cursor
 	y       []float64
 	t       float64
-	first   map[segmentKind]float64 // accepted first steps by kind of segment
+	first   map[uint64]float64 // accepted first steps by what the drive is at the start of a segment
 	legs    []energy.Leg
 	account duty.Account
 	observe ode.Observer
@@ -32,9 +32,6 @@ type runner struct {
 	dropEvents bool
 	dropBreaks bool
 }
-
-// A segmentKind tells segments with the same drive, up to their place in time.
-type segmentKind struct{ leg, motion, part int }
 
 // Run runs the duty. It always returns a result: an interrupted or failed run keeps what it had.
 func (m *Model) Run(ctx context.Context, opt Options) *Result {
@@ -58,7 +55,7 @@ func newRunner(m *Model, opt Options, wrap func(ode.System) ode.System) *runner 
 		p.System = wrap(p.System)
 	}
 	r := &runner{
-		model: m, first: map[segmentKind]float64{}, cursor: duty.NewCursor(&m.Net.Duty),
+		model: m, first: map[uint64]float64{}, cursor: duty.NewCursor(&m.Net.Duty),
 		integ: ode.New(p, method, ode.Tolerance{Rel: rel, Abs: abs}), y: make([]float64, p.N),
 	}
 	r.result = &Result{
@@ -163,7 +160,7 @@ func (r *runner) event(u *duty.Until) ode.Event {
 // motions runs the motions of a leg, each cut at the breaks of the tables.
 func (r *runner) motions(ctx context.Context, leg *duty.Leg, events []ode.Event) ode.Reason {
 	if len(leg.Motions) == 0 {
-		return r.stretch(ctx, leg, 0, nil, leg.End, events)
+		return r.stretch(ctx, leg, nil, leg.End, events)
 	}
 	for i := range leg.Motions {
 		m := leg.Motions[i] // a copy: the leg is used again
@@ -172,7 +169,7 @@ func (r *runner) motions(ctx context.Context, leg *duty.Leg, events []ode.Event)
 			end = leg.End
 		}
 		from := r.t
-		reason := r.stretch(ctx, leg, i, &m, end, events)
+		reason := r.stretch(ctx, leg, &m, end, events)
 		r.account.Add(m.Account(from, r.t))
 		if reason != ode.Reached {
 			return reason
@@ -182,13 +179,13 @@ func (r *runner) motions(ctx context.Context, leg *duty.Leg, events []ode.Event)
 }
 
 // stretch runs one motion to its end, with a restart at every break of a table.
-func (r *runner) stretch(ctx context.Context, leg *duty.Leg, index int, m *duty.Motion, end float64, events []ode.Event) ode.Reason {
-	for part := 0; r.t < end; part++ {
+func (r *runner) stretch(ctx context.Context, leg *duty.Leg, m *duty.Motion, end float64, events []ode.Event) ode.Reason {
+	for r.t < end {
 		stop := end
 		if !r.dropBreaks {
 			stop = r.model.signals.NextBreak(r.t, end)
 		}
-		if reason := r.segment(ctx, leg, segmentKind{leg.Kind, index, part}, m, stop, events); reason != ode.Reached {
+		if reason := r.segment(ctx, leg, m, stop, events); reason != ode.Reached {
 			return reason
 		}
 	}
@@ -196,25 +193,26 @@ func (r *runner) stretch(ctx context.Context, leg *duty.Leg, index int, m *duty.
 }
 
 // segment runs to the next break, within which everything is smooth.
-func (r *runner) segment(ctx context.Context, leg *duty.Leg, kind segmentKind, m *duty.Motion, end float64, events []ode.Event) ode.Reason {
-	res := r.result
+func (r *runner) segment(ctx context.Context, leg *duty.Leg, m *duty.Motion, end float64, events []ode.Event) ode.Reason {
+	res, start := r.result, r.t
 	res.Segments = append(res.Segments, record.Segment{
-		Start: r.t, End: end, Label: leg.Label, Round: r.cursor.Round(), First: kind.motion == 0 && kind.part == 0,
+		Start: start, End: end, Label: leg.Label, Round: r.cursor.Round(), First: start == leg.Start,
 	})
-	res.motions = append(res.motions, motion{r.t, end, m})
-	r.model.signals.Enter(r.t, end, m)
+	res.motions = append(res.motions, motion{start, end, m})
+	r.model.signals.Enter(start, end, m)
 	r.model.system.Restart()
-	if f := r.integ.Restart(r.t, r.y); f != nil {
+	if f := r.integ.Restart(start, r.y); f != nil {
 		res.Failure = f
 		return ode.Failed
 	}
 	r.started = true
-	stop := r.integ.Run(ctx, end, r.first[kind], events, r.observe)
+	drive := r.model.signals.Fingerprint(start)
+	stop := r.integ.Run(ctx, end, r.first[drive], events, r.observe)
 	r.t = stop.T
 	copy(r.y, r.integ.State())
 	res.Segments[len(res.Segments)-1].End = r.t
-	if stop.First > 0 && stop.First < 0.99*(end-res.Segments[len(res.Segments)-1].Start) {
-		r.first[kind] = stop.First
+	if stop.First > 0 {
+		r.first[drive] = stop.First
 	}
 	switch stop.Reason {
 	case ode.Failed:

@@ -93,18 +93,19 @@ func (p *problem) measure(res *network.Result) answer {
 	next := 0
 	for k := 0; k < tape.Steps(); k++ {
 		start, h, _, coef := tape.Step(k)
-		see := func(theta float64) {
-			for j, i := range p.Probe {
-				if y := tape.Value(coef, i, theta); y > high[j] {
-					high[j] = y
-				}
-			}
-		}
+		first, atEnd := next, p.segmentEnd(start+h)
 		for ; float64(next)*p.DtOut <= start+h; next++ {
-			see((float64(next)*p.DtOut - start) / h)
 		}
-		if p.segmentEnd(start + h) {
-			see(1)
+		for j, i := range p.Probe {
+			if tape.Bound(coef, i) <= high[j] {
+				continue // no sample of this step can be the peak
+			}
+			for s := first; s < next; s++ {
+				high[j] = max(high[j], tape.Value(coef, i, (float64(s)*p.DtOut-start)/h))
+			}
+			if atEnd {
+				high[j] = max(high[j], tape.Value(coef, i, 1))
+			}
 		}
 	}
 	_, _, _, last := tape.Step(tape.Steps() - 1)

@@ -54,7 +54,7 @@ type Stop struct {
 	Reason  Reason
 	T       float64
 	Event   int      // which event passed
-	First   float64  // length of the first accepted step, worth giving to a later run with the same drive
+	First   float64  // what the first accepted step could have been, for a later run with the same drive
 	Failure *Failure // when Failed
 }
 
@@ -151,7 +151,7 @@ func (g *Integrator) Run(ctx context.Context, end, first float64, events []Event
 			}
 		}
 		if stop.First == 0 {
-			stop.First = s.H
+			stop.First = s.H * g.factor(norm)
 		}
 		if !g.accept(s, last, end, observe) {
 			stop.Reason, stop.Failure = Failed, g.failure("the equations have no finite value at the end of a step", s.H)

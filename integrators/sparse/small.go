@@ -64,8 +64,8 @@ func (s *structure) entry(i, j int32) int32 {
 	panic("sparse: entry outside the pattern of the factors")
 }
 
-// load puts K into place: diagonals and their errors, entries
-// below the diagonal, and for unsymmetric K those above it.
+// load puts K into place: diagonals and their errors, entries below the
+// diagonal, and for unsymmetric K those above it.
 func (m *small) load(f *factors, a, shift []float64) {
 	s := m.s
 	for k := range s.order {

@@ -11,7 +11,6 @@ type Cursor struct {
 	stack   []frame
 	leg     Leg
 	late    float64
-	kinds   map[kindKey]int
 }
 
 // A frame is a list of phases being gone through.
@@ -21,17 +20,11 @@ type frame struct {
 	repeat *Phase
 	round  int     // which time through, from zero
 	start  float64 // of this round
-	begin  *Phase
-}
-
-type kindKey struct {
-	phase *Phase
-	rest  bool
 }
 
 // NewCursor returns a cursor at the start of a program.
 func NewCursor(p *Program) *Cursor {
-	c := &Cursor{program: p, kinds: map[kindKey]int{}}
+	c := &Cursor{program: p}
 	c.stack = []frame{{phases: p.Phases}}
 	c.speed = startSpeed(p.Phases)
 	return c
@@ -130,19 +123,16 @@ func (c *Cursor) Round() int {
 	return 0
 }
 
-func (c *Cursor) begin(label string, p *Phase, rest bool) *Leg {
-	key := kindKey{p, rest}
-	if _, ok := c.kinds[key]; !ok {
-		c.kinds[key] = len(c.kinds)
-	}
-	c.leg = Leg{Label: label, Kind: c.kinds[key], Start: c.time, Late: c.late, Motions: c.leg.Motions[:0]}
+// begin starts a leg at the present time.
+func (c *Cursor) begin(label string) *Leg {
+	c.leg = Leg{Label: label, Start: c.time, Late: c.late, Motions: c.leg.Motions[:0]}
 	c.late = 0
 	return &c.leg
 }
 
 // fill plans what remains of a repeat's interval.
 func (c *Cursor) fill(p *Phase, end float64) {
-	l := c.begin(p.Label+", rest of the interval", p, true)
+	l := c.begin(p.Label + ", rest of the interval")
 	l.End = end
 	if c.program.Vehicle != nil {
 		l.Motions = ramp(l.Motions, road(c.program.Vehicle, None), c.time, end, c.speed, 0)
@@ -151,7 +141,7 @@ func (c *Cursor) fill(p *Phase, end float64) {
 
 // plan lays out the leg of a phase from the present time and speed.
 func (c *Cursor) plan(p *Phase) {
-	l := c.begin(p.Label, p, false)
+	l := c.begin(p.Label)
 	l.Until, l.phase = p.Until, p
 	duration, acceleration := c.shape(p)
 	l.End = c.time + duration

@@ -74,7 +74,6 @@ type Program struct {
 // A Leg is a stretch of the duty with one motion plan: a phase, or the rest of a repeat's interval.
 type Leg struct {
 	Label   string
-	Kind    int     // legs of equal kind have the same drive up to their place in time
 	Start   float64 // s
 	End     float64 // s, at the latest
 	Until   *Until

@@ -1,6 +1,7 @@
 package duty
 
 import (
+	"math"
 	"sort"
 
 	"workheat/network/element"
@@ -75,4 +76,24 @@ func (s *Signals) At(t float64, value, rate []float64) {
 		value[FirstTable+i] = l.y + l.slope*(t-l.t)
 		rate[FirstTable+i] = l.slope
 	}
+}
+
+// Fingerprint returns a number that is the same, but for rare accidents of rounding, for segments that
+// begin under the same drive: same values and rates of all signals. What worked as a first step in one of
+// them is a good guess in the others.
+func (s *Signals) Fingerprint(t float64) uint64 {
+	h := uint64(14695981039346656037) // FNV-1a, Fowler, Noll and Vo
+	mix := func(x float64) { h = (h ^ uint64(math.Float32bits(float32(x)))) * 1099511628211 }
+	if s.motion != nil {
+		v, dv, power, dpower := s.motion.Signals(t)
+		mix(v)
+		mix(dv)
+		mix(power)
+		mix(dpower)
+	}
+	for _, l := range s.lines {
+		mix(l.y + l.slope*(t-l.t))
+		mix(l.slope)
+	}
+	return h
 }

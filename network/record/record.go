@@ -89,6 +89,15 @@ func (t *Tape) Value(coef []float64, i int, theta float64) float64 {
 	return v
 }
 
+// Bound returns a value that state i does not exceed within the step.
+func (t *Tape) Bound(coef []float64, i int) float64 {
+	v := coef[i]
+	for k := 1; k <= t.degree; k++ {
+		v += max(0, coef[k*t.n+i])
+	}
+	return v
+}
+
 // Slope returns the derivative by θ of state i.
 func (t *Tape) Slope(coef []float64, i int, theta float64) float64 {
 	k := t.degree

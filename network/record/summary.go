@@ -94,6 +94,13 @@ func summariseHeld(t *Tape, n Node) Summary {
 // eachTurn calls visit at every θ inside the step at which state i turns round, in order.
 func (t *Tape) eachTurn(coef []float64, i int, visit func(theta float64)) {
 	const looks = 8
+	first, rest := coef[t.n+i], 0.0
+	for k := 2; k <= t.degree; k++ {
+		rest += float64(k) * math.Abs(coef[k*t.n+i])
+	}
+	if rest < math.Abs(first) {
+		return // the slope keeps its sign
+	}
 	a, fa := 0.0, t.Slope(coef, i, 0)
 	for j := 1; j <= looks; j++ {
 		b := float64(j) / looks
