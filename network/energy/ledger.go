@@ -6,7 +6,7 @@ import (
 	"workheat/network/element"
 )
 
-// roundOff is what the ledger may miss, as a share of the throughput: well above the sum of roundings of a
+// roundOff is what the ledger may miss, as a share of the book's scale: well above the sum of roundings of a
 // run of many thousand steps, and far below any error of a law.
 const roundOff = 1e-11
 
@@ -45,7 +45,7 @@ func (b *Book) ledger(r *Run) {
 		check.add(d.Gap, d.Name)
 	}
 	b.LedgerGap = check.Gap
-	check.Allowed = roundOff * b.Throughput
+	check.Allowed = roundOff * b.scale()
 	check.Passed = check.Gap <= check.Allowed
 	b.Checks = append(b.Checks, check)
 }
@@ -87,6 +87,18 @@ func (b *Book) addPath(r *Run, p Path) {
 	default:
 		b.HeatOut -= in
 	}
+}
+
+// scale is the size of the energies that the run moved, against which gaps are judged: the throughput, or what
+// one path carried inside on balance if that is more. A network without a border has no throughput at all.
+func (b *Book) scale() float64 {
+	most := b.Throughput
+	for _, p := range b.Paths {
+		if p.Inside {
+			most = max(most, abs(p.Net))
+		}
+	}
+	return most
 }
 
 // border reports whether an end is not inside: held, or the world.

@@ -101,11 +101,11 @@ func (b *Book) takeRecount(r *Run, totals []float64) {
 		c.add(b.Nodes[i].Recount, n.Name)
 	}
 	b.IndependentGap = c.Gap
-	c.Allowed = recountSlack(r) * b.Throughput
+	c.Allowed = recountSlack(r) * b.scale()
 	c.Passed = c.Gap <= c.Allowed
 	b.Checks = append(b.Checks, c)
 }
 
-// recountSlack is the share of the throughput that the recount may miss: ten times the relative tolerance,
+// recountSlack is the share of the book's scale that the recount may miss: ten times the relative tolerance,
 // or what round-off leaves.
 func recountSlack(r *Run) float64 { return max(10*r.Rel, 1e-10) }

@@ -130,6 +130,6 @@ func (r *reader) doubtful() {
 			continue
 		}
 		seen[m] = true
-		r.warn(i, fmt.Sprintf("the data of %s are indicative: %s", m.Name, m.Doubtful), "give a measured heat capacity if the margin is small")
+		r.warn(i, fmt.Sprintf("the data of %s are indicative; its entry in the catalogue says why", m.Name), "where the margin is small, give a measured heat capacity")
 	}
 }

@@ -101,7 +101,7 @@ func hottest(curves []Curve, most int) ([]Curve, int) {
 }
 
 // thin keeps the first, the last, and the lowest and highest sample of each of that many equal buckets of
-// [0, end], in order; of a level stretch only its ends. Samples that are not numbers are left out.
+// [0, end], in order; of a level stretch only its ends. Samples that are not finite are left out.
 func thin(t, y []float64, end float64, buckets int) (time, value []float64) {
 	keep := func(i int) {
 		if k := len(time); k > 0 && time[k-1] >= t[i] {
@@ -118,7 +118,7 @@ func thin(t, y []float64, end float64, buckets int) (time, value []float64) {
 		bucket := bucketOf(t[i], end, buckets)
 		low, high, last := -1, -1, i
 		for ; i < n && bucketOf(t[i], end, buckets) == bucket; i++ {
-			if math.IsNaN(y[i]) {
+			if !finite(y[i]) {
 				continue
 			}
 			if low < 0 || y[i] < y[low] {
@@ -133,7 +133,7 @@ func thin(t, y []float64, end float64, buckets int) (time, value []float64) {
 			continue
 		}
 		if len(time) == 0 {
-			keep(firstNumber(y))
+			keep(firstFinite(y))
 		}
 		keep(min(low, high))
 		keep(max(low, high))
@@ -151,9 +151,11 @@ func bucketOf(t, end float64, buckets int) int {
 	return min(int(t/end*float64(buckets)), buckets-1)
 }
 
-func firstNumber(y []float64) int {
+func finite(v float64) bool { return !math.IsNaN(v - v) }
+
+func firstFinite(y []float64) int {
 	for i, v := range y {
-		if !math.IsNaN(v) {
+		if finite(v) {
 			return i
 		}
 	}

@@ -42,7 +42,7 @@ func Lines(curves []Curve) []Line {
 // A limit further above the curves than farSpans times their span, or of leastSpan if that is more, would
 // press them flat. Chosen by eye.
 const (
-	farSpans  = 2.0
+	farSpans  = 1.0
 	leastSpan = 50 // K
 )
 

@@ -5,10 +5,8 @@ package plot
 
 import (
 	"bytes"
-	"fmt"
 	"image/png"
 	"io"
-	"strings"
 
 	"gonum.org/v1/plot/vg"
 	"gonum.org/v1/plot/vg/draw"
@@ -86,18 +84,3 @@ func newScene(o *outcome.Run) *scene {
 
 // height grows with the legend.
 func (s *scene) height() vg.Length { return max(height, s.legend.height()+100) }
-
-// Strips around the plot, in points.
-const (
-	margin     = 12
-	titleStrip = 40
-	phaseStrip = 15
-	footLine   = 10
-	gutter     = 24 // for the numbers of the curves
-)
-
-// draw draws the whole picture.
-func (s *scene) draw(c draw.Canvas) {
-	c.SetColor(veil)
-	c.FillPolygon(draw.Canvas{}.background(c))
-}

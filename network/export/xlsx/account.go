@@ -12,7 +12,7 @@ const accountColumns = 8
 
 // account writes the energy book, one section for each of its lists.
 func (b *book) account() error {
-	widths := []float64{34, 18, 18, 18, 18, 16, 16, 60}
+	widths := []float64{34, 18, 18, 18, 18, 16, 16, 80}
 	out := b.open(energySheet, 3+len(b.Doubts()), widths, nil)
 	out.line("Energy book", styleTitle, accountColumns, lineChars)
 	out.notices(accountColumns, lineChars)
@@ -51,6 +51,7 @@ func (l *ledger) section(title string, heads ...string) {
 func (l *ledger) energy(joule float64) any { return l.number(l.kilo.Show(joule), formatKilo) }
 func (l *ledger) gap(joule float64) any    { return l.number(joule, formatTiny) }
 func (l *ledger) plain(text string) any    { return l.text(text, styleNone) }
+func (l *ledger) after(text string) any    { return l.text(text, styleIndented) } // of a number
 
 func (l *ledger) totals() {
 	l.section("Totals", "Account", "Energy [kJ]", "Gap [J]")
@@ -70,7 +71,7 @@ func (l *ledger) nodes() {
 		if n.Held {
 			kind, stored = "held", nil
 		}
-		l.add(l.plain(n.Name), l.energy(n.Net), stored, l.gap(n.Gap), l.gap(n.Recount), l.plain(kind))
+		l.add(l.plain(n.Name), l.energy(n.Net), stored, l.gap(n.Gap), l.gap(n.Recount), l.after(kind))
 	}
 }
 
@@ -86,7 +87,7 @@ func (l *ledger) dissipators() {
 	if len(l.book.Dissipators) == 0 {
 		return
 	}
-	l.section("Dissipators", "Dissipator", "Work taken [kJ]", "Heat given [kJ]", "Work by the vehicle's account [kJ]", "Gap [J]")
+	l.section("Dissipators", "Dissipator", "Work taken [kJ]", "Heat given [kJ]", "By the vehicle's account [kJ]", "Gap [J]")
 	for _, d := range l.book.Dissipators {
 		l.add(l.plain(d.Name), l.energy(d.Work), l.energy(d.Heat), l.energy(d.Expected), l.gap(d.Gap))
 	}
@@ -115,7 +116,9 @@ func (l *ledger) checks() {
 		if !c.Passed {
 			verdict = l.text("FAILED", styleAlarm)
 		}
-		l.add(l.plain(c.Name), l.number(float64(c.Layer), formatCount), l.gap(c.Gap), l.gap(c.Allowed),
-			l.plain(c.Unit), verdict, l.plain(c.Where), l.text(c.About, styleWrapped))
+		const chars = 75 // of the last column
+		height := 14.5 * float64(1+len([]rune(c.About))/chars)
+		l.addHigh(height, l.plain(c.Name), l.number(float64(c.Layer), formatCount), l.gap(c.Gap), l.gap(c.Allowed),
+			l.after(c.Unit), verdict, l.plain(c.Where), l.text(c.About, styleWrapped))
 	}
 }

@@ -1,6 +1,7 @@
 package xlsx
 
 import (
+	"bytes"
 	"fmt"
 	"strings"
 
@@ -82,7 +83,21 @@ func (b *book) chart() error {
 	if len(d.curves) == 0 {
 		return nil
 	}
-	return b.file.AddChart(chartSheet, fmt.Sprintf("A%d", row+2), b.picture(d))
+	if err := b.file.AddChart(chartSheet, fmt.Sprintf("A%d", row+2), b.picture(d)); err != nil {
+		return err
+	}
+	b.straighten()
+	return nil
+}
+
+// straighten takes an empty text property out of the axis titles of the chart: some readers take its angle,
+// zero, for that of the title, and lay the one of the upright axis flat.
+func (b *book) straighten() {
+	const part = "xl/charts/chart1.xml"
+	const empty = `<txPr><a:bodyPr anchorCtr="false" rot="0" spcFirstLastPara="false"></a:bodyPr><a:p></a:p></txPr></title>`
+	if xml, ok := b.file.Pkg.Load(part); ok {
+		b.file.Pkg.Store(part, bytes.ReplaceAll(xml.([]byte), []byte(empty), []byte("</title>")))
+	}
 }
 
 // remark says what the picture leaves out.
@@ -188,7 +203,7 @@ func (b *book) chartData() error {
 	}
 	for i := range d.near {
 		l := &d.near[i]
-		pair("limit: "+l.Name+" ("+l.Of()+")", []float64{0, b.End}, []float64{l.Temperature, l.Temperature})
+		pair(l.Name+" "+d.level.Format(l.Temperature, 6)+" ("+l.Of()+")", []float64{0, b.End}, []float64{l.Temperature, l.Temperature})
 	}
 	out := b.open(dataSheet, dataHead, widths, styles)
 	text := "Thinned for the chart: lowest and highest of each short stretch of time. All samples are on the sheet " + tempSheet + ". "

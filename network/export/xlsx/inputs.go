@@ -32,7 +32,7 @@ func (b *book) inputs() error {
 		if rows > 1 {
 			height = math.Min(409, 13*float64(rows))
 		}
-		out.addHigh(height, i+1, b.text(text, styleCode))
+		out.addHigh(height, b.number(float64(i+1), styleLine), b.text(text, styleCode))
 	}
 	return out.close()
 }

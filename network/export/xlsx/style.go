@@ -18,8 +18,10 @@ const (
 	styleGood       = "good"
 	styleHead       = "head"
 	styleSection    = "section"
+	styleIndented   = "indented"
 	styleWrapped    = "wrapped"
 	styleCode       = "code"
+	styleLine       = "line"
 	styleExceeded   = "exceeded"
 )
 
@@ -34,6 +36,7 @@ const (
 )
 
 const (
+	face     = "Calibri"
 	ink      = "222222"
 	pale     = "E8EDF2"
 	red      = "B00020"
@@ -66,32 +69,40 @@ func styleOf(name string) *excelize.Style {
 	wrap := &excelize.Alignment{WrapText: true, Vertical: "top"}
 	switch name {
 	case styleTitle:
-		return &excelize.Style{Font: &excelize.Font{Bold: true, Size: 14, Color: ink}}
+		return &excelize.Style{Font: &excelize.Font{Family: face, Bold: true, Size: 14, Color: ink}}
 	case styleCaution:
-		return &excelize.Style{Font: &excelize.Font{Italic: true, Color: grey}, Alignment: wrap}
+		return &excelize.Style{Font: &excelize.Font{Family: face, Italic: true, Color: grey}, Alignment: wrap}
 	case styleAside:
-		return &excelize.Style{Font: &excelize.Font{Italic: true, Color: grey}}
+		return &excelize.Style{Font: &excelize.Font{Family: face, Italic: true, Color: grey}}
 	case styleAlarm:
-		return &excelize.Style{Font: &excelize.Font{Bold: true, Color: red}, Fill: fill(palePink), Alignment: wrap}
+		return &excelize.Style{Font: &excelize.Font{Family: face, Bold: true, Color: red}, Fill: fill(palePink), Alignment: wrap}
 	case styleAlarmAside:
-		return &excelize.Style{Font: &excelize.Font{Bold: true, Color: red}}
+		return &excelize.Style{Font: &excelize.Font{Family: face, Bold: true, Color: red}}
 	case styleGood:
-		return &excelize.Style{Font: &excelize.Font{Color: green}, Fill: fill(paleMint), Alignment: wrap}
+		return &excelize.Style{Font: &excelize.Font{Family: face, Color: green}, Fill: fill(paleMint), Alignment: wrap}
 	case styleHead:
 		return &excelize.Style{
-			Font: &excelize.Font{Bold: true, Color: ink}, Fill: fill(pale),
+			Font: &excelize.Font{Family: face, Bold: true, Color: ink}, Fill: fill(pale),
 			Border:    []excelize.Border{{Type: "bottom", Color: grey, Style: 1}},
 			Alignment: &excelize.Alignment{WrapText: true, Vertical: "center", Horizontal: "center"},
 		}
 	case styleSection:
-		return &excelize.Style{Font: &excelize.Font{Bold: true, Size: 12, Color: ink}}
+		return &excelize.Style{Font: &excelize.Font{Family: face, Bold: true, Size: 12, Color: ink}}
+	case styleIndented:
+		return &excelize.Style{Alignment: &excelize.Alignment{Indent: 1, Horizontal: "left"}}
 	case styleWrapped:
 		return &excelize.Style{Alignment: wrap}
 	case styleCode:
 		return &excelize.Style{Font: &excelize.Font{Family: "Courier New", Size: 9}, Alignment: wrap}
+	case styleLine:
+		format := formatCount
+		return &excelize.Style{
+			Font:      &excelize.Font{Family: face, Size: 9, Color: grey},
+			Alignment: &excelize.Alignment{Horizontal: "left", Vertical: "top"}, CustomNumFmt: &format,
+		}
 	case styleExceeded:
 		format := formatTenth
-		return &excelize.Style{Font: &excelize.Font{Bold: true, Color: red}, Fill: fill(palePink), CustomNumFmt: &format}
+		return &excelize.Style{Font: &excelize.Font{Family: face, Bold: true, Color: red}, Fill: fill(palePink), CustomNumFmt: &format}
 	}
 	return &excelize.Style{CustomNumFmt: &name}
 }

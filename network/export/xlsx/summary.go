@@ -27,7 +27,7 @@ func (b *book) summary() error {
 		outcome.Head("Time above", unit.Time),
 		outcome.Head("First above", unit.Time),
 	}
-	widths := []float64{b.nodeWidth(), 11, 11, 11, 14, 11, 28, 11, 11, 12, 12}
+	widths := []float64{b.nodeWidth(), 11, 11, 11, 19, 11, 30, 11, 11, 12, 12}
 	frozen := 4 + len(b.Doubts())
 	if b.Book != nil && b.Book.Closed {
 		frozen++
@@ -88,7 +88,7 @@ func (b *book) summaryRows(out *sheet, s *record.Summary) {
 			style = styleExceeded
 		}
 		out.add(append(node(),
-			b.text(m.Name, styleNone),
+			b.text(m.Name, styleIndented),
 			b.number(level.Show(m.Temperature), formatTenth),
 			b.number(m.Margin, style),
 			b.number(m.Above, formatTenth),

@@ -1,0 +1,120 @@
+package main
+
+import (
+	"fmt"
+	"io"
+	"math"
+	"strings"
+
+	"github.com/spf13/cobra"
+
+	"workheat/network"
+	"workheat/network/element"
+	"workheat/network/unit"
+)
+
+type checkOptions struct{ strict bool }
+
+func newCheck(e env) *cobra.Command {
+	var opt checkOptions
+	c := &cobra.Command{
+		Use:   "check NETLIST",
+		Short: "read a netlist and show what it resolves to, without running it",
+		Long: `check reads a netlist, reports all its problems, and shows the resolved network at the
+start of its duty: nodes with their heat capacities, elements with their conductances
+and flows, time constants of the linearised network, the pattern of the equations, and
+the phases.
+
+Exit codes: 0 fine; 1 with --strict: there are warnings; 2 the netlist or the command
+line has problems.`,
+		Example: "  workheat check examples/car-front-corner/netlist.json",
+		Args:    cobra.ExactArgs(1),
+	}
+	c.Flags().BoolVar(&opt.strict, "strict", false, "exit with 1 if there are warnings")
+	c.RunE = func(c *cobra.Command, args []string) error { return check(e, args[0], opt) }
+	return c
+}
+
+func check(e env, name string, opt checkOptions) error {
+	model, err := load(e, name)
+	if err != nil {
+		return err
+	}
+	printDescription(e.out, name, model)
+	render(e, model.Warnings)
+	if opt.strict && len(model.Warnings) > 0 {
+		return coded{exitLimit, fmt.Sprintf("%s has %d warnings", name, len(model.Warnings))}
+	}
+	return nil
+}
+
+var formText = map[element.Form]string{element.Stored: "", element.Massless: "massless", element.Held: "held"}
+
+// printDescription prints the resolved network.
+func printDescription(w io.Writer, name string, model *network.Model) {
+	d := model.Describe()
+	if t := model.Net.Title; t != "" {
+		name = t
+	}
+	fmt.Fprintf(w, "%s\n\nNodes\n", name)
+	rows := [][]string{{"node", "J/K at start", "start degC", "material", "limits degC"}}
+	for i, n := range d.Nodes {
+		if i == mostNodes {
+			rows = append(rows, []string{fmt.Sprintf("... and %d more", len(d.Nodes)-i)})
+			break
+		}
+		capacity := formText[n.Form]
+		if n.Form == element.Stored {
+			capacity = fmt.Sprintf("%.5g", n.Capacity)
+		}
+		var limits []string
+		for _, l := range n.Limits {
+			limits = append(limits, fmt.Sprintf("%s %s", celsius(l.Temperature), clip(l.Name)))
+		}
+		rows = append(rows, []string{clip(n.Name), capacity, celsius(n.Start), n.Material, strings.Join(limits, ", ")})
+	}
+	columns(w, rows, map[int]bool{0: true, 3: true, 4: true})
+	printElements(w, d)
+	printPhases(w, d)
+	fmt.Fprintln(w)
+	if d.HasModes {
+		slow := "none: a part of the network can lose heat to nowhere"
+		if !math.IsInf(d.Slowest, 0) {
+			slow = clock(d.Slowest)
+		}
+		fmt.Fprintf(w, "Slowest time constant at the start: %s; fastest: %s\n", slow, unit.Time.Format(d.Fastest, 4))
+	}
+	fmt.Fprintf(w, "%d states, %d entries in the sparse matrix\n", d.States, d.Entries)
+	fmt.Fprintf(w, "Relative tolerance %g, absolute %s\n", model.Net.Rel, unit.TemperatureDifference.Format(model.Net.Abs, 3))
+}
+
+// printElements prints the paths.
+func printElements(w io.Writer, d *network.Description) {
+	fmt.Fprintln(w, "\nElements at the start of the duty")
+	rows := [][]string{{"element", "kind", "from", "to", "W/K", "W"}}
+	for i, p := range d.Paths {
+		if i == mostNodes {
+			rows = append(rows, []string{fmt.Sprintf("... and %d more", len(d.Paths)-i)})
+			break
+		}
+		conductance := ""
+		if p.Conductance != 0 {
+			conductance = fmt.Sprintf("%.4g", p.Conductance)
+		}
+		rows = append(rows, []string{clip(p.Name), p.Kind, clip(end(p.From)), clip(end(p.To)), conductance, fmt.Sprintf("%.4g", p.Flow)})
+	}
+	columns(w, rows, map[int]bool{0: true, 1: true, 2: true, 3: true})
+}
+
+// printPhases prints the duty.
+func printPhases(w io.Writer, d *network.Description) {
+	fmt.Fprintln(w, "\nDuty")
+	for _, p := range d.Phases {
+		indent := strings.Repeat("  ", 1+strings.Count(p.Label, "."))
+		fmt.Fprintf(w, "%s%s", indent, p.Label)
+		if p.Count > 0 {
+			fmt.Fprintf(w, " %d times", p.Count)
+		}
+		fmt.Fprintln(w)
+	}
+}
