@@ -101,7 +101,7 @@ func declare(t testing.TB, c *element.Catalogue, s sample) (*element.Kind, *elem
 // read reads one field; ok is false if it was left out.
 func read(t testing.TB, c *element.Catalogue, f element.Field, text string, s sample) (v element.Value, ok bool) {
 	switch f.Type {
-	case element.NodePair, element.NodeName, element.Shares:
+	case element.NodePair, element.Shares:
 		return element.Value{Nodes: s.nodes, Shares: s.shares}, true
 	}
 	if text == "" {

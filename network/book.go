@@ -6,21 +6,24 @@ import (
 	"workheat/network/energy"
 )
 
-// book makes the energy book of the run: it hands the recount the laws one flow at a time, the recorded
-// solution and the duty as it was run, and nothing of how the equations were solved.
-func (r *runner) book() *energy.Book {
+// evidence is what the energy book is made from: the laws one flow at a time, the recorded solution and the
+// duty as it was run, and nothing of how the equations were solved.
+func (r *runner) evidence() *energy.Run {
 	res, sys := r.result, r.model.system
 	run := &energy.Run{
-		Tape: res.Tape, Legs: r.legs, Tables: r.model.Net.Tables, Rel: res.Rel, Abs: res.Abs,
+		Tape: res.Tape, Legs: r.legs, Tables: r.model.Net.Tables, Rel: res.Rel, Abs: res.Abs, FirstTable: duty.FirstTable,
 		NumSignals: r.model.signals.Count(), Flow: sys.Recount, Expected: map[string]float64{},
 	}
 	for i, n := range r.model.Net.Nodes {
 		node := energy.Node{Name: n.Name, State: res.Nodes[i].State, Capacity: n.Capacity, Start: n.Start, Signal: n.Signal}
 		if node.State >= 0 {
 			node.EndState = r.y[i]
-			node.EndTemp = sys.Temperature(i, r.y[i])
+			node.Reported = res.Nodes[i].Temperature
 		}
 		run.Nodes = append(run.Nodes, node)
+	}
+	for j, i := range r.model.Net.Order {
+		run.Nodes[i].Highest, run.Nodes[i].When = res.Summary[j].Highest, res.Summary[j].When
 	}
 	quad, comp := r.integ.Quadratures(), r.integ.Compensation()
 	for i := range sys.Paths {
@@ -33,7 +36,8 @@ func (r *runner) book() *energy.Book {
 	}
 	r.handSignals(run)
 	r.handVehicle(run)
-	return energy.Make(run)
+	r.handGiven(run)
+	return run
 }
 
 // handSignals gives the book the signals and the slopes of any recorded segment.
@@ -48,9 +52,31 @@ func (r *runner) handSignals(run *energy.Run) {
 		}
 		signals.At(t, value, rate)
 	}
+	run.Temperatures = func(segment int, t float64, y []float64) []float64 {
+		r.result.enter(segment)
+		return r.model.system.State(t, y, nil).T
+	}
+	f, q := make([]float64, len(r.y)), make([]float64, len(run.Paths))
+	a, d, ft := make([]float64, r.model.system.Pattern().NNZ()), make([]float64, len(r.y)), make([]float64, len(r.y))
+	still := make([]float64, len(r.y))
 	run.Slopes = func(segment int, t float64, y []float64) ([][]float64, []float64) {
 		r.result.enter(segment)
-		return r.model.system.PathSlopes(t, y)
+		dep, _ := r.model.system.PathSlopes(t, y)
+		r.system.Rates(f, q, t, y)
+		r.system.Jacobian(a, d, ft, t, y)
+		clear(q)
+		r.system.AddSlopes(q, 0, still, 1) // the slopes by time, as the integrator has them
+		return dep, q
+	}
+	pattern, product := r.model.system.Pattern(), make([]float64, len(r.y))
+	run.Matrix = func(v []float64) (av, rate []float64) {
+		for i := range product {
+			product[i] = 0
+			for s := pattern.RowStart[i]; s < pattern.RowStart[i+1]; s++ {
+				product[i] += a[s] * v[pattern.Col[s]]
+			}
+		}
+		return product, ft
 	}
 }
 
@@ -59,6 +85,13 @@ func (r *runner) handVehicle(run *energy.Run) {
 	if r.model.Net.Body == "" {
 		return
 	}
+	run.Road = energy.Road{Vehicle: *r.model.Net.Duty.Vehicle, Speed: duty.SpeedSignal, Brake: duty.BrakeSignal,
+		Grade: func(segment int) float64 {
+			if m := r.result.motions[segment].plan; m != nil {
+				return m.Grade()
+			}
+			return 0
+		}}
 	a := r.account
 	run.Vehicle = &energy.VehicleLine{
 		Name: r.model.Net.Body, Distance: a.Distance, Drive: a.Drive, Kinetic: a.Kinetic,
@@ -73,6 +106,22 @@ func (r *runner) handVehicle(run *energy.Run) {
 				work := d.Number("part of braking") * a.Brake
 				run.Expected[d.Name] = work
 				run.Vehicle.Modelled += work
+			}
+		}
+	}
+}
+
+// handGiven gives the book the sources whose power is known over time.
+func (r *runner) handGiven(run *energy.Run) {
+	for _, g := range r.model.Net.Groups {
+		if g.Kind.Section != element.Sources {
+			continue
+		}
+		for _, d := range g.Elements {
+			if signal := d.Signal("power"); signal >= duty.FirstTable {
+				run.Given = append(run.Given, energy.Given{
+					Element: d.Name, Power: r.model.Net.Tables[signal-duty.FirstTable], Factor: d.Number("factor"),
+				})
 			}
 		}
 	}

@@ -1,9 +1,11 @@
 package network
 
 import (
+	"workheat/integrators/ode"
 	"workheat/network/duty"
 	"workheat/network/element"
 	"workheat/network/modes"
+	"workheat/network/netlist"
 )
 
 // A Description is a resolved network, in SI, at the start of its duty.
@@ -56,6 +58,7 @@ func (m *Model) Describe() *Description {
 	}
 	y, q := make([]float64, d.States), make([]float64, len(m.system.Paths))
 	m.system.Start(y)
+	m.settle(y)
 	temps := append([]float64(nil), m.system.State(0, y, q).T...)
 	dep, _ := m.system.PathSlopes(0, y)
 	for _, i := range m.Net.Order {
@@ -89,6 +92,15 @@ func (m *Model) Describe() *Description {
 	m.modes(d, temps, y)
 	m.phases(d, m.Net.Duty.Phases)
 	return d
+}
+
+// settle sets the temperatures of the nodes without mass to what their balances say at the start. Where they
+// have no solution the first guesses stay, and a run will say why.
+func (m *Model) settle(y []float64) {
+	integrator := ode.New(m.system.Problem(), method, ode.Tolerance{Rel: netlist.DefaultRel, Abs: netlist.DefaultAbs})
+	if integrator.Restart(0, y) == nil {
+		copy(y, integrator.State())
+	}
 }
 
 // modes finds the time constants at the start.

@@ -5,8 +5,8 @@ package network
 import (
 	"fmt"
 
+	"workheat/integrators"
 	"workheat/integrators/ode"
-	"workheat/integrators/rosenbrock"
 	"workheat/network/assembly"
 	"workheat/network/diag"
 	"workheat/network/duty"
@@ -78,14 +78,14 @@ type motion struct {
 	plan       *duty.Motion // nil: nothing moves
 }
 
-// Method is the integration method in use.
-var method = rosenbrock.Rodas5P
+// method is the integration method in use.
+var method = integrators.Default
 
 // recordNodes describes the nodes to the record.
 func (m *Model) recordNodes() []record.Node {
 	nodes := make([]record.Node, len(m.Net.Nodes))
 	for i, n := range m.Net.Nodes {
-		nodes[i] = record.Node{Name: n.Name, State: i, Limits: m.Net.Limits[i]}
+		nodes[i] = record.Node{Name: n.Name, State: i, Limits: m.Net.Limits[i], Start: n.Start}
 		if n.Form == element.Held {
 			nodes[i].State = -1
 			nodes[i].Given = m.Net.Tables[n.Signal-duty.FirstTable]

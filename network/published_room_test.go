@@ -4,6 +4,7 @@ import (
 	"context"
 	"fmt"
 	"math"
+	"strings"
 	"testing"
 
 	"workheat/library"
@@ -161,6 +162,15 @@ func lump(node, air, film, more, duty string) string {
 	"nodes": {"body": %s, "air": {"held": "%s"}},
 	"conductances": {"film": {"kind": "convection", "between": ["body", "air"], %s}},
 	%s "duty": %s}`, node, air, film, more, duty)
+}
+
+// replaceOnce replaces the only place of a text.
+func replaceOnce(t testing.TB, text, old, fresh string) string {
+	t.Helper()
+	if n := strings.Count(text, old); n != 1 {
+		t.Fatalf("%q stands %d times in the netlist", old, n)
+	}
+	return strings.Replace(text, old, fresh, 1)
 }
 
 // gauss integrates f over [a, b] in n panels of four Gauss-Legendre points each (Abramowitz and Stegun,

@@ -26,7 +26,6 @@ type runner struct {
 	legs    []energy.Leg
 	account duty.Account
 	observe ode.Observer
-	started bool
 
 	// What tests may break on purpose; nil in every real run.
 	dropEvents bool
@@ -55,7 +54,7 @@ func newRunner(m *Model, opt Options, wrap func(ode.System) ode.System) *runner 
 		p.System = wrap(p.System)
 	}
 	r := &runner{
-		model: m, first: map[uint64]float64{}, cursor: duty.NewCursor(&m.Net.Duty),
+		model: m, system: p.System, first: map[uint64]float64{}, cursor: duty.NewCursor(&m.Net.Duty),
 		integ: ode.New(p, method, ode.Tolerance{Rel: rel, Abs: abs}), y: make([]float64, p.N),
 	}
 	r.result = &Result{
@@ -94,7 +93,7 @@ func (r *runner) run(ctx context.Context, opt Options) *Result {
 	r.summarise()
 	r.rangeWarnings()
 	if opt.Audit && res.Tape.Steps() > 0 {
-		res.Book = r.book()
+		res.Book = energy.Make(r.evidence())
 	}
 	if opt.Tolerance && res.Book != nil && res.Failure == nil && !res.Interrupted {
 		r.toleranceCheck(ctx)
@@ -118,13 +117,8 @@ func (r *runner) leg(ctx context.Context, leg *duty.Leg) (end float64, done bool
 	var events []ode.Event
 	if u := leg.Until; u != nil {
 		record.Node, record.Falls, record.Target = u.Node, u.Falls, u.Temperature
-		e := r.event(u)
-		if r.started && e.Value(r.t, r.y) >= 0 { // the mark has been passed before
-			r.legs = append(r.legs, record)
-			return leg.Start, true
-		}
 		if !r.dropEvents {
-			events = []ode.Event{e}
+			events = []ode.Event{r.event(u)}
 		}
 	}
 	reason := r.motions(ctx, leg, events)
@@ -195,17 +189,20 @@ func (r *runner) stretch(ctx context.Context, leg *duty.Leg, m *duty.Motion, end
 // segment runs to the next break, within which everything is smooth.
 func (r *runner) segment(ctx context.Context, leg *duty.Leg, m *duty.Motion, end float64, events []ode.Event) ode.Reason {
 	res, start := r.result, r.t
+	r.model.signals.Enter(start, end, m)
+	r.model.system.Restart()
+	failure := r.integ.Restart(start, r.y)
+	if failure == nil && passed(events, start, r.integ.State()) {
+		return ode.Passed
+	}
 	res.Segments = append(res.Segments, record.Segment{
 		Start: start, End: end, Label: leg.Label, Round: r.cursor.Round(), First: start == leg.Start,
 	})
 	res.motions = append(res.motions, motion{start, end, m})
-	r.model.signals.Enter(start, end, m)
-	r.model.system.Restart()
-	if f := r.integ.Restart(start, r.y); f != nil {
-		res.Failure = f
+	if failure != nil {
+		res.Failure = failure
 		return ode.Failed
 	}
-	r.started = true
 	drive := r.model.signals.Fingerprint(start)
 	stop := r.integ.Run(ctx, end, r.first[drive], events, r.observe)
 	r.t = stop.T
@@ -223,6 +220,17 @@ func (r *runner) segment(ctx context.Context, leg *duty.Leg, m *duty.Motion, end
 	return stop.Reason
 }
 
+// passed reports whether the value of an event is not below zero: its mark was passed before the phase began, or
+// a node without mass jumped over it at a break.
+func passed(events []ode.Event, t float64, y []float64) bool {
+	for i := range events {
+		if events[i].Value(t, y) >= 0 {
+			return true
+		}
+	}
+	return false
+}
+
 // summarise reads the summaries in the order of the netlist.
 func (r *runner) summarise() {
 	for _, i := range r.model.Net.Order {
@@ -230,29 +238,43 @@ func (r *runner) summarise() {
 	}
 }
 
-// rangeWarnings looks, at the end of every step, for laws and materials used outside their range.
+// rangeWarnings looks, at the end of every step, for laws used outside their range, and for materials.
 func (r *runner) rangeWarnings() {
+	if r.model.system.HasRanges() {
+		r.lawWarnings()
+	}
+	for j, i := range r.model.Net.Order {
+		r.materialWarning(i, r.result.Summary[j])
+	}
+}
+
+// lawWarnings warns once for each path and text.
+func (r *runner) lawWarnings() {
 	tape, sys := r.result.Tape, r.model.system
 	y := make([]float64, tape.States())
-	seen := map[int]bool{}
+	type fault struct {
+		path int
+		text string
+	}
+	seen := map[fault]bool{}
+	at, entered := 0.0, -1
+	report := func(path int, text string) {
+		if f := (fault{path, text}); !seen[f] {
+			seen[f] = true
+			r.warn("%s: %s, first at %.4g s", sys.Paths[path].Element, text, at)
+		}
+	}
 	for k := 0; k < tape.Steps(); k++ {
 		start, h, segment, coef := tape.Step(k)
 		for i := range y {
 			y[i] = tape.Value(coef, i, 1)
 		}
-		r.result.enter(segment)
-		sys.Ranges(sys.State(start+h, y, nil), func(path int, text string) {
-			if !seen[path] {
-				seen[path] = true
-				r.warn("%s: %s, first at %.4g s", sys.Paths[path].Element, text, start+h)
-			}
-		})
-		if !sys.HasRanges() {
-			break
+		if segment != entered {
+			r.result.enter(segment)
+			entered = segment
 		}
-	}
-	for j, i := range r.model.Net.Order {
-		r.materialWarning(i, r.result.Summary[j])
+		at = start + h
+		sys.Ranges(sys.State(at, y, nil), report)
 	}
 }
 

@@ -193,7 +193,7 @@ func verdict(res *network.Result, strict bool) error {
 	case strict && res.Book != nil && !res.Book.Closed:
 		return coded{exitLimit, "the energy book does not close"}
 	case strict && exceeded(res) > 0:
-		return coded{exitLimit, fmt.Sprintf("%d limits are exceeded", exceeded(res))}
+		return coded{exitLimit, fmt.Sprintf("limits exceeded: %d", exceeded(res))}
 	}
 	return nil
 }

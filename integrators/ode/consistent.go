@@ -1,109 +1,70 @@
 package ode
 
-import (
-	"fmt"
-	"math"
-	"sort"
-)
+import "math"
 
-const newtonMost = 50 // damped Newton steps for the algebraic states
+// Newton's method for the algebraic states.
+const (
+	newtonMost = 50   // steps
+	leastDamp  = 1e-6 // a step that must be shorter than this part of itself leads nowhere
+	settled    = 1e-6 // of the absolute tolerance: a smaller change ends the search
+	quadratic  = 1e-3 // the same for a full step: the next change is smaller by its square
+	noise      = 1e-2 // a smaller change is taken even if round-off makes the residual rise
+)
 
 // makeConsistent solves the algebraic rows for the algebraic states at the current point by Newton's
 // method, halving the step while the residual does not fall.
 func (g *Integrator) makeConsistent() *Failure {
-	if !g.hasAlgebraic() {
+	if g.algebraic == nil {
 		return nil
 	}
-	v, old := make([]float64, g.problem.N), make([]float64, g.problem.N)
 	residual := g.residual()
 	for range newtonMost {
-		if !g.stepper.Newton(v) {
-			return g.failure("the algebraic equations have no solution here (a singular matrix)", 0)
-		}
-		copy(old, g.y)
-		change, damp := 0.0, 1.0
-		for {
-			change = 0
-			for i := range g.y {
-				if g.problem.Algebraic(i) {
-					g.y[i] = old[i] + damp*v[i]*g.stepper.Step().D[i]
-					change = math.Max(change, math.Abs(damp*v[i]))
-				}
-			}
-			ok := g.stepper.Start(g.t, g.y)
-			if r := g.residual(); ok && (r <= residual || change < 0.01*g.tol.Abs) {
-				residual = r
-				break
-			}
-			if damp /= 2; damp < 1e-6 {
-				return g.failure("the algebraic equations have no solution near the start", 0)
-			}
-		}
-		if change < 1e-6*g.tol.Abs || residual == 0 {
+		if residual == 0 {
 			return nil
 		}
-		if change < 1e-3*g.tol.Abs && damp == 1 { // quadratic: the next change is below round-off
+		if !g.stepper.Newton(g.change) {
+			return g.failure("the algebraic equations have no solution here (a singular matrix)", 0)
+		}
+		way, damp, ok := g.descend(&residual)
+		if !ok {
+			return g.failure("the algebraic equations have no solution near the start", 0)
+		}
+		if way < settled*g.tol.Abs || (damp == 1 && way < quadratic*g.tol.Abs) {
 			return nil
 		}
 	}
 	return g.failure("the algebraic equations did not settle", 0)
 }
 
-func (g *Integrator) hasAlgebraic() bool {
-	for i := range g.y {
-		if g.problem.Algebraic(i) {
-			return true
+// descend moves the algebraic states by the longest half, quarter ... of g.change that lowers the residual.
+// It returns the largest change, in units of y/D, and the part; ok is false if there was none.
+func (g *Integrator) descend(residual *float64) (way, damp float64, ok bool) {
+	d, full := g.stepper.Step().D, 0.0
+	for _, i := range g.algebraic {
+		full = math.Max(full, math.Abs(g.change[i]))
+		g.old[i] = g.y[i]
+		g.change[i] *= d[i]
+	}
+	for damp = 1; damp >= leastDamp; damp /= 2 {
+		for _, i := range g.algebraic {
+			g.y[i] = g.old[i] + damp*g.change[i]
+		}
+		finite := g.stepper.Start(g.t, g.y)
+		way = damp * full
+		if r := g.residual(); finite && (r <= *residual || way < noise*g.tol.Abs) {
+			*residual = r
+			return way, damp, true
 		}
 	}
-	return false
+	return way, damp, false
 }
 
+// residual returns the sum of the sizes of the algebraic rows.
 func (g *Integrator) residual() float64 {
 	sum := 0.0
-	for i, f := range g.stepper.Step().F {
-		if g.problem.Algebraic(i) {
-			sum += math.Abs(f)
-		}
+	f := g.stepper.Step().F
+	for _, i := range g.algebraic {
+		sum += math.Abs(f[i])
 	}
 	return sum
-}
-
-// A Failure says where and how the numbers failed.
-type Failure struct {
-	Text  string
-	T, H  float64
-	Worst []Worst // the states with the largest error over tolerance, at most three
-}
-
-// A Worst is a state that held a step back.
-type Worst struct {
-	Name  string
-	Ratio float64 // error over tolerance; not finite if a value was not
-	Rate  float64 // f of that state at the start of the step, over its scale
-}
-
-func (f *Failure) Error() string {
-	text := fmt.Sprintf("at t = %.6g s with a step of %.3g s: %s", f.T, f.H, f.Text)
-	for _, w := range f.Worst {
-		text += fmt.Sprintf("; %s: error over tolerance %.3g, rate %.3g per s", w.Name, w.Ratio, w.Rate)
-	}
-	return text
-}
-
-func (g *Integrator) failure(text string, h float64) *Failure {
-	f := &Failure{Text: text, T: g.t, H: h}
-	s := g.stepper.Step()
-	for i := range s.Err {
-		tol := s.D[i] * (g.tol.Abs + g.tol.Rel*g.rise[i])
-		f.Worst = append(f.Worst, Worst{g.problem.Name(i), math.Abs(s.Err[i]) / tol, s.F[i] / s.D[i]})
-	}
-	rank := func(w Worst) float64 {
-		if math.IsNaN(w.Ratio) {
-			return math.Inf(1)
-		}
-		return w.Ratio
-	}
-	sort.SliceStable(f.Worst, func(i, j int) bool { return rank(f.Worst[i]) > rank(f.Worst[j]) })
-	f.Worst = f.Worst[:min(3, len(f.Worst))]
-	return f
 }

@@ -8,34 +8,46 @@ import (
 // An Integrator drives one method over the segments of a run. Within a segment f must be smooth; at its
 // ends the caller calls Restart. It is not safe for concurrent use.
 type Integrator struct {
-	problem *Problem
-	method  Method
-	stepper Stepper
-	tol     Tolerance
+	problem   *Problem
+	method    Method
+	stepper   Stepper
+	tol       Tolerance
+	algebraic []int // states without a derivative
 
-	t      float64
-	y      []float64
-	origin []float64 // y at the first start
-	rise   []float64 // largest |y - origin|/D so far
-	quad   []float64 // totals, with their compensation
-	comp   []float64
+	t       float64
+	y       []float64
+	origin  []float64 // y at the first start
+	rise    []float64 // largest |y - origin|/D so far
+	quad    []float64 // totals, with their compensation
+	comp    []float64
+	started bool
+	fresh   bool // the stepper has been started at (t, y) and nobody has moved since
 
-	started       bool
 	before, after []float64 // event values
 	dense, point  []float64
+	change, old   []float64 // of Newton's method for the algebraic states
 }
 
-// New binds a method to a problem.
+// New binds a method to a problem. A tolerance that is not positive panics.
 func New(p *Problem, m Method, tol Tolerance) *Integrator {
 	if !(tol.Abs > 0) || !(tol.Rel >= 0) {
 		panic("ode: the tolerance must be positive")
 	}
-	return &Integrator{
+	g := &Integrator{
 		problem: p, method: m, stepper: m.Bind(p), tol: tol,
 		y: make([]float64, p.N), origin: make([]float64, p.N), rise: make([]float64, p.N),
 		quad: make([]float64, p.NQ), comp: make([]float64, p.NQ),
 		dense: make([]float64, (m.Degree()+1)*p.N), point: make([]float64, p.N),
 	}
+	for i := range g.y {
+		if p.Algebraic(i) {
+			g.algebraic = append(g.algebraic, i)
+		}
+	}
+	if g.algebraic != nil {
+		g.change, g.old = make([]float64, p.N), make([]float64, p.N)
+	}
+	return g
 }
 
 // A Reason says why a run came back.
@@ -58,18 +70,21 @@ type Stop struct {
 	Failure *Failure // when Failed
 }
 
-// An Observer is shown every accepted step; the stepper serves its dense output. It must not call Try,
-// Accept or Start.
+// An Observer is shown every accepted step; dense writes its polynomial as Stepper.Dense does. It must not
+// keep s, nor call the system.
 type Observer func(s *Step, dense func(dst []float64))
 
-// Time, State, Quadratures and Stats return where the integrator is. The slices are its own.
+// Time returns where the integrator is.
 func (g *Integrator) Time() float64 { return g.t }
 
-// State returns y at Time.
+// State returns y at Time. The slice is the integrator's own.
 func (g *Integrator) State() []float64 { return g.y }
 
 // Quadratures returns the totals since the first start. The slice is the integrator's own.
 func (g *Integrator) Quadratures() []float64 { return g.quad }
+
+// Compensation returns what must be added to Quadratures for the best totals.
+func (g *Integrator) Compensation() []float64 { return g.comp }
 
 // Stats returns the counters of the run so far.
 func (g *Integrator) Stats() Stats { return *g.stepper.Stats() }
@@ -90,100 +105,119 @@ func (g *Integrator) Restart(t float64, y []float64) *Failure {
 		g.started = true
 		copy(g.origin, g.y)
 	}
+	g.fresh = true
 	return nil
 }
 
 // Run advances to the time end, or to the first event that passes. first is a guess of the first step, or
-// zero. observe may be nil.
+// zero. observe may be nil. The first call must follow a Restart; a later one without a Restart goes on from
+// where the last one stopped. An end that is not finite panics.
 func (g *Integrator) Run(ctx context.Context, end, first float64, events []Event, observe Observer) Stop {
-	stop := Stop{Reason: Reached}
-	if len(g.before) != len(events) {
-		g.before, g.after = make([]float64, len(events)), make([]float64, len(events))
+	stop := Stop{Reason: Reached, T: g.t}
+	if !g.begin(end, events) {
+		return g.fail(stop, "the equations have no finite value here", 0)
 	}
-	h := first
-	if !(h > 0) {
-		h = g.firstStep(g.stepper.Step(), end-g.t)
+	p := pace{h: first, end: end}
+	if !(first > 0) {
+		p.h = g.firstStep(g.stepper.Step(), end-g.t)
 	}
-	grow := true
-	for bad := 0; g.t < end; {
+	for g.t < end {
 		if ctx.Err() != nil {
 			stop.Reason = Interrupted
-			break
+			return stop
 		}
-		last := g.t+h*stretch >= end
-		if last {
-			h = end - g.t
+		norm := g.testError(g.stepper.Try(p.predict(g.t)))
+		h, factor := g.stepper.Step().H, g.factor(norm) // an event may shorten the step
+		which := -1
+		if norm <= 1 && len(events) > 0 {
+			which, norm = g.landOnEvent(events, norm)
 		}
-		if h < leastStep*math.Max(math.Abs(g.t), math.Abs(end)) && !last {
-			stop.Reason, stop.Failure = Failed, g.failure("the step has become too small to go on", h)
-			break
-		}
-		ok := g.stepper.Try(h)
-		s := g.stepper.Step()
-		norm := math.NaN()
-		if ok {
-			norm = g.norm(s)
-		}
-		if math.IsNaN(norm) || math.IsInf(norm, 0) {
-			if bad++; bad > badMost {
-				stop.Reason, stop.Failure = Failed, g.failure("a value is not finite however small the step", h)
-				break
+		if !(norm <= 1) || !g.acceptStep(observe) {
+			if text := g.rejectStep(&p, norm); text != "" {
+				return g.fail(stop, text, h)
 			}
-			g.stepper.Stats().Rejected++
-			h, grow = h*badShrink, false
 			continue
 		}
-		bad = 0
-		if norm > 1 {
-			g.stepper.Stats().Rejected++
-			h, grow = h*math.Min(1, g.factor(norm)), false
-			continue
-		}
-		if len(events) > 0 {
-			if low, high, which := g.crossing(s, events); which >= 0 {
-				if !g.land(g.t, low, high, h, events[which]) {
-					h *= badShrink
-					continue
-				}
-				stop.Reason, stop.Event = Passed, which
-				g.stepper.Stats().Events++
-				last = false
-			}
-		}
+		stop.T = g.t
 		if stop.First == 0 {
-			stop.First = s.H * g.factor(norm)
+			stop.First = h * factor
 		}
-		if !g.accept(s, last, end, observe) {
-			stop.Reason, stop.Failure = Failed, g.failure("the equations have no finite value at the end of a step", s.H)
-			break
+		if which >= 0 {
+			g.stepper.Stats().Events++
+			stop.Reason, stop.Event = Passed, which
+			return stop
 		}
-		if stop.Reason == Passed {
-			break
-		}
-		f := g.factor(norm)
-		if !grow {
-			f = math.Min(1, f)
-		}
-		h, grow = h*f, true
+		p.grow(h, factor)
 	}
-	stop.T = g.t
 	return stop
 }
 
-// accept takes the tried step over: state, quadratures, observer, evaluation at the new point.
-func (g *Integrator) accept(s *Step, last bool, end float64, observe Observer) bool {
+// begin makes ready for a run; false if the stepper had to be started again and could not.
+func (g *Integrator) begin(end float64, events []Event) bool {
+	if math.IsNaN(end) || math.IsInf(end, 0) {
+		panic("ode: the end of a run is not finite")
+	}
+	if len(g.before) != len(events) {
+		g.before, g.after = make([]float64, len(events)), make([]float64, len(events))
+	}
+	ok := g.fresh || g.stepper.Start(g.t, g.y)
+	g.fresh = false
+	return ok
+}
+
+// fail completes a stop with what went wrong at a step of length h.
+func (g *Integrator) fail(stop Stop, text string, h float64) Stop {
+	stop.Reason, stop.Failure = Failed, g.failure(text, h)
+	return stop
+}
+
+// testError returns the error norm of a tried step; it is not a number if the try failed or a value of the
+// step is not finite.
+func (g *Integrator) testError(tried bool) float64 {
+	if !tried {
+		return math.NaN()
+	}
+	norm := g.norm(g.stepper.Step())
+	if math.IsInf(norm, 0) {
+		return math.NaN()
+	}
+	return norm
+}
+
+// rejectStep shortens the step after a try with the given error norm. It returns why the run cannot go on,
+// or nothing.
+func (g *Integrator) rejectStep(p *pace, norm float64) string {
+	g.stepper.Stats().Rejected++
+	if norm <= 1 { // the step was good, but not the point that it led to
+		norm = math.NaN()
+	}
+	return p.reject(g.stepper.Step().H, g.factor(norm), g.t)
+}
+
+// acceptStep takes the tried step over: observer, state, quadratures. It reports false, and changes nothing,
+// if the equations have no finite value at its end.
+func (g *Integrator) acceptStep(observe Observer) bool {
+	if !g.stepper.Finish() {
+		return false
+	}
+	s := g.stepper.Step()
 	if observe != nil {
 		observe(s, g.stepper.Dense)
 	}
 	g.remember(s)
 	copy(g.y, s.Y1)
-	g.t = s.T + s.H
-	if last {
-		g.t = end // by assignment: sums of steps do not hit it
-	}
-	quad, comp, dq := g.quad, g.comp, s.Quad
+	g.t = s.End
+	g.addQuadratures(s.Quad)
+	g.stepper.Stats().Steps++
+	g.stepper.Accept()
+	return true
+}
+
+// addQuadratures adds the increments of a step to the totals by Neumaier's compensated sum.
+func (g *Integrator) addQuadratures(dq []float64) {
+	quad, comp := g.quad, g.comp
 	comp, dq = comp[:len(quad)], dq[:len(quad)]
-	for i, q := range quad { // Neumaier's compensated sum
+	for i, q := range quad {
 		x := dq[i]
 		t := q + x
 		if math.Abs(q) >= math.Abs(x) {
@@ -193,9 +227,4 @@ func (g *Integrator) accept(s *Step, last bool, end float64, observe Observer) b
 		}
 		quad[i] = t
 	}
-	g.stepper.Stats().Steps++
-	return g.stepper.Accept()
 }
-
-// Compensation returns what must be added to Quadratures for the best totals.
-func (g *Integrator) Compensation() []float64 { return g.comp }

@@ -11,6 +11,8 @@
 package ode
 
 import (
+	"fmt"
+
 	"workheat/integrators/sparse"
 )
 
@@ -34,15 +36,23 @@ type System interface {
 // A Problem is a system with what a method must know to bind to it.
 type Problem struct {
 	System    System
-	N, NQ     int             // number of states and of quadratures
-	Pattern   *sparse.Pattern // structure of A
-	Symmetric bool            // A is symmetric in value
-	Mass      []float64       // m, N entries; nil: all ones
-	Name      func(i int) string
+	N, NQ     int                // number of states and of quadratures
+	Pattern   *sparse.Pattern    // structure of A
+	Symmetric bool               // A is symmetric in value
+	Mass      []float64          // m, N entries; nil: all ones
+	Name      func(i int) string // nil: states are called by their number
 }
 
 // Algebraic reports whether row i has no derivative.
 func (p *Problem) Algebraic(i int) bool { return p.Mass != nil && p.Mass[i] == 0 }
+
+// name returns the name of state i.
+func (p *Problem) name(i int) string {
+	if p.Name == nil {
+		return fmt.Sprintf("state %d", i)
+	}
+	return p.Name(i)
+}
 
 // A Tolerance says which error of a step may pass: Abs + Rel·r for each state, in units of y/D, where r is
 // the largest distance that the state has had from its start so far.
@@ -57,33 +67,42 @@ type Method interface {
 	Bind(p *Problem) Stepper
 }
 
-// A Stepper takes one step at a time. All slices it hands out are its own and change with its next call.
+// A Stepper takes one step at a time: Try, then Finish and Accept if the step pleases. All slices it hands
+// out are its own and change with its next call.
 type Stepper interface {
 	// Start places the stepper at (t, y) and evaluates there. It reports false if a value is not finite.
 	Start(t float64, y []float64) bool
-	// Try attempts a step of length h from the current point and reports false if it met a value that is
-	// not finite or a matrix that it could not factor.
-	Try(h float64) bool
+	// Try attempts a step from the current point to the time to and reports false if it could not factor a
+	// matrix or met a slope that is not finite. Values that are not finite else show in Step().Err.
+	Try(to float64) bool
 	// Step returns the latest tried step.
 	Step() *Step
-	// Accept moves to the end of the tried step and evaluates there; false as for Start.
-	Accept() bool
+	// Finish evaluates f at the end of the tried step. It reports false if a value there or an increment of
+	// a quadrature is not finite; the step must not be accepted then.
+	Finish() bool
+	// Accept moves to the end of the tried and finished step. Nobody may call the system between Finish and
+	// the next Try.
+	Accept()
 	// Dense writes the polynomial of the latest tried step into dst: (Degree+1)·N coefficients, the N
-	// constant ones first; y(T+θH) = Σ dst[k·N+i] θᵏ, 0 ≤ θ ≤ 1.
+	// constant ones first; y(T+θH) = Σ dst[k·N+i] θᵏ, 0 ≤ θ ≤ 1. It serves until Accept.
 	Dense(dst []float64)
-	// Newton writes into v the change that drives the algebraic rows' residual at the current point to
-	// zero while the others keep their values, in units of y/D; false if the matrix is singular.
+	// Newton writes into v the change that drives the algebraic rows' residual at the point of the latest
+	// Start to zero while the others keep their values, in units of y/D; false if the matrix is singular.
 	Newton(v []float64) bool
+	// Suspect returns the first state at which the latest Try or Finish met a value that is not finite or a
+	// row without a pivot, or -1. It may repeat the work.
+	Suspect() int
 	// Stats returns the counters.
 	Stats() *Stats
 }
 
-// A Step is what a tried step came to.
+// A Step is what a tried step came to. D and F belong to its start.
 type Step struct {
 	T, H   float64
+	End    float64 // the time it was tried to; H is End − T rounded
 	Y0, Y1 []float64
 	Err    []float64 // estimated error of Y1
-	D      []float64 // natural scale of y at the start of the step
+	D      []float64 // natural scale of y
 	F      []float64 // f(T, Y0)
 	Quad   []float64 // increments of the quadratures
 }

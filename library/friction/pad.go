@@ -1,6 +1,8 @@
 package friction
 
 import (
+	"fmt"
+
 	"workheat/network/element"
 	"workheat/network/unit"
 )
@@ -19,7 +21,20 @@ func Pad() *element.Kind {
 				Want: unit.Number}.From(0, 1).Must(),
 			element.Field{Key: "heats", About: "the nodes that take the heat, each with its share; the shares add to one", Type: element.Shares}.Must(),
 		},
-		Batch: func() element.Batch { return new(pads) },
+		Together: checkParts,
+		Batch:    func() element.Batch { return new(pads) },
+	}
+}
+
+// checkParts reports the brake with which the parts of the braking work come to more than the whole.
+func checkParts(all []*element.Declaration) {
+	sum := 0.0
+	for _, d := range all {
+		before := sum
+		if sum += d.Number("part of braking"); sum > 1+1e-9 && before <= 1+1e-9 {
+			d.Report("part of braking", fmt.Sprintf("with this one the brakes take %.6g of the braking work, more than all of it", sum),
+				"the parts of all brakes of the vehicle add to 1 at most")
+		}
 	}
 }
 

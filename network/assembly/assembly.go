@@ -193,7 +193,12 @@ func (s *System) Pattern() *sparse.Pattern { return s.pattern }
 func (s *System) States() int { return s.states }
 
 // Start writes the state at the start temperatures: stored energies count from there, so they are zero.
+// It also forgets the pieces of the capacity tables that earlier runs were on, so that every run gives the
+// same bits.
 func (s *System) Start(y []float64) {
+	for k := range s.caps.varying {
+		s.caps.find(&s.caps.varying[k], 0)
+	}
 	for i, n := range s.Nodes[:s.states] {
 		y[i] = 0
 		if n.Form == element.Massless {

@@ -178,7 +178,8 @@ func (s *System) HasRanges() bool {
 }
 
 // PathSlopes returns, at time t and a state vector, the slopes of each path by its Deps and by time alone
-// (held temperatures included), as the equations use them. It allocates; it is for checks.
+// (held temperatures included), as the equations use them. The slices are the system's own and valid until the
+// next call of any method; it is for checks.
 func (s *System) PathSlopes(t float64, y []float64) (dep [][]float64, rate []float64) {
 	s.place(t, y)
 	for i := range s.batches {
@@ -186,12 +187,13 @@ func (s *System) PathSlopes(t float64, y []float64) (dep [][]float64, rate []flo
 		b.Slopes(s.slopes[b.deps:b.count], s.rates[b.first:b.paths], &s.state)
 	}
 	s.addHeldRates()
+	dep = make([][]float64, 0, len(s.Paths))
 	for i := range s.batches {
 		b := &s.batches[i]
 		for p := b.first; p < b.paths; p++ {
 			k := b.deps + (p-b.first)*b.stride
-			dep = append(dep, append([]float64(nil), s.slopes[k:k+b.stride]...))
+			dep = append(dep, s.slopes[k:k+b.stride])
 		}
 	}
-	return dep, append([]float64(nil), s.rates...)
+	return dep, s.rates
 }

@@ -47,7 +47,9 @@ func startSpeed(phases []Phase) float64 {
 			return p.Speed
 		}
 	case Follow:
-		return p.Trace.Y[0]
+		if p.Trace != nil {
+			return p.Trace.Y[0]
+		}
 	}
 	return 0
 }

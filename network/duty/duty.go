@@ -39,6 +39,7 @@ type Phase struct {
 	Verb  Verb
 	Label string // where it stands: "2.1 brake" is the first phase inside the second entry
 	Place int    // for the reader: which place in the file it came from
+	Told  bool   // by the reader: a fault of it was reported; its numbers may be missing
 
 	From, To     float64 // m/s
 	Deceleration float64 // m/s^2, positive

@@ -16,6 +16,7 @@ type Motion struct {
 	mass    float64
 	still   float64 // N, grade and rolling resistance
 	air     float64 // kg/m, air drag over speed squared
+	grade   float64 // rise over run
 	sine    float64 // of the grade's angle
 	roll    float64 // N, rolling resistance alone
 	coast   *coast
@@ -27,7 +28,7 @@ func road(v *element.Vehicle, grade float64) Motion {
 		grade = v.Grade
 	}
 	cosine := 1 / math.Sqrt(1+grade*grade)
-	m := Motion{inertia: v.Mass * v.Rotating, mass: v.Mass, sine: grade * cosine, air: 0.5 * v.Air * v.DragArea}
+	m := Motion{inertia: v.Mass * v.Rotating, mass: v.Mass, grade: grade, sine: grade * cosine, air: 0.5 * v.Air * v.DragArea}
 	m.roll = v.Mass * Gravity * v.Rolling * cosine
 	m.still = v.Mass*Gravity*m.sine + m.roll
 	return m
@@ -71,6 +72,9 @@ func (m *Motion) Speed(t float64) float64 {
 	}
 	return m.v0 + m.a*(t-m.T0)
 }
+
+// Grade returns the slope of the road, rise over run.
+func (m *Motion) Grade() float64 { return m.grade }
 
 // Signals returns the speed and the braking power of all brakes together at time t, with their rates.
 func (m *Motion) Signals(t float64) (v, dv, power, dpower float64) {
@@ -135,11 +139,15 @@ func (m *Motion) Account(ta, tb float64) Account {
 	return a
 }
 
-// A coast is a motion under a constant braking force: inertia·dv/dt = −(K + air·v²) with K = brake + still,
-// solved in closed form for each sign of K.
+// A coast is a motion under a constant braking force: inertia·dv/dt = −(K + air·v²) with K = brake + still.
+// With w = √(|K|/air) and τ = tan(rate·t), or tanh when K < 0, the addition theorem gives
+//
+//	v = (v0 ∓ w·τ)/(1 + v0·τ/w)
+//
+// which loses no digits when either K or the air drag is all but zero.
 type coast struct {
 	brake, k, air, inertia float64
-	v0, phase, rate, scale float64
+	v0, rate, scale        float64 // scale: w
 }
 
 func newCoast(m *Motion, brake, v0 float64) *coast {
@@ -149,11 +157,6 @@ func newCoast(m *Motion, brake, v0 float64) *coast {
 	}
 	c.scale = math.Sqrt(math.Abs(c.k) / m.air)
 	c.rate = math.Sqrt(math.Abs(c.k)*m.air) / m.inertia
-	if c.k > 0 {
-		c.phase = math.Atan(v0 / c.scale)
-	} else {
-		c.phase = math.Atanh(c.scale / v0)
-	}
 	return c
 }
 
@@ -165,9 +168,11 @@ func (c *coast) speed(t float64) float64 {
 	case c.k == 0:
 		return c.v0 / (1 + c.air*c.v0*t/c.inertia)
 	case c.k > 0:
-		return c.scale * math.Tan(c.phase-c.rate*t)
+		tau := math.Tan(c.rate * t)
+		return (c.v0 - c.scale*tau) / (1 + c.v0*tau/c.scale)
 	}
-	return c.scale / math.Tanh(c.phase+c.rate*t)
+	tau := math.Tanh(c.rate * t)
+	return (c.v0 + c.scale*tau) / (1 + c.v0*tau/c.scale)
 }
 
 // time returns when the speed has fallen to v1, or ok = false if it never does.
@@ -175,15 +180,16 @@ func (c *coast) time(v1 float64) (t float64, ok bool) {
 	if c.k+c.air*v1*v1 <= 0 {
 		return 0, false
 	}
+	lost := c.v0 - v1
 	switch {
 	case c.air == 0:
-		return (c.v0 - v1) * c.inertia / c.k, true
+		return lost * c.inertia / c.k, true
 	case c.k == 0:
-		return (c.v0/v1 - 1) * c.inertia / (c.air * c.v0), true
+		return lost / v1 * c.inertia / (c.air * c.v0), true
 	case c.k > 0:
-		return (c.phase - math.Atan(v1/c.scale)) / c.rate, true
+		return math.Atan(c.scale*lost/(c.scale*c.scale+c.v0*v1)) / c.rate, true
 	}
-	return (math.Atanh(c.scale/v1) - c.phase) / c.rate, true
+	return math.Atanh(c.scale*lost/(c.v0*v1-c.scale*c.scale)) / c.rate, true
 }
 
 // distance returns the way between two speeds.

@@ -4,7 +4,7 @@ package element
 type Value struct {
 	Number   float64   // Quantity and Number: SI
 	Text     string    // Text
-	Nodes    []int     // NodeName, NodePair and Shares: node indices
+	Nodes    []int     // NodePair and Shares: node indices
 	Shares   []float64 // Shares: one for each node
 	Signal   int       // Signal and BodyName: signal index
 	Body     int       // BodyName: body index

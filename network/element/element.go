@@ -31,8 +31,13 @@ type Kind struct {
 	Source  string  // where the law comes from, with its valid range
 	Fields  []Field // what may be written, in the order in which it is shown
 
-	// Check reports faults that bear on more than one field. It may be nil.
+	// Check reports faults that bear on more than one field. It may be nil. It is called when no required
+	// field is missing; a field that could not be read is there, with NaN as its number and nothing else,
+	// so that a comparison must report only when it is true.
 	Check func(d *Declaration)
+
+	// Together reports faults that bear on all elements of the kind. It may be nil.
+	Together func(all []*Declaration)
 
 	// Batch returns an empty batch that will hold all elements of this kind. It is nil for bodies.
 	Batch func() Batch
@@ -48,7 +53,6 @@ type Type int
 const (
 	Quantity   Type = iota // text with a unit, read by Field.Want
 	Number                 // a pure number, or text that comes to one
-	NodeName               // one node name
 	NodePair               // two node names
 	Shares                 // node names, each with its share; the shares add to one
 	Signal                 // a quantity, or a table in time of it

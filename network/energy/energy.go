@@ -2,20 +2,29 @@
 // what is missing, in three layers of which each can fail on its own.
 //
 // Layer 1, the ledger, adds up the quadratures that were carried with the method; it closes to round-off
-// whatever the tolerance, if the program is right. Layer 2, the recount, takes the recorded solution alone
-// and does the energies again with other code; its gap measures the error of the integration. Layer 3, the
-// tolerance check, is a second run at a tenth of the tolerance.
+// whatever the tolerance, if the program is right. Layer 2 takes the recorded solution alone and does the
+// energies again with other code: the recount, whose gap measures the error of the integration, and beside it
+// checks of what the recount rests on and of what it cannot see (temperatures, peaks, given heat, work, the
+// vehicle's account, slopes and matrix, breaks, ends of phases). Layer 3, the tolerance check, is a second run
+// at a tenth of the tolerance.
+//
+// What layer 2 takes from the program are the recorded polynomials, each element's law said once more, the speed
+// and braking power of the duty, and which nodes a path joins. Temperatures from energies, tables in time,
+// stored energies, the vehicle's account and all sums are its own.
 package energy
 
 // A Book is the account of one run, in joules.
 type Book struct {
-	WorkIn         float64 // work turned into heat by the dissipators
-	HeatIn         float64 // heat given, and taken in through the border where it came in on balance
-	HeatOut        float64 // heat that went out through the border on balance
-	Stored         float64 // gain of stored energy of all nodes
-	Throughput     float64 // sum of absolute energies through the border
-	LedgerGap      float64 // what the ledger misses, summed over nodes and dissipators without sign
-	IndependentGap float64 // the same by the recount
+	WorkIn     float64 // work turned into heat by the dissipators
+	HeatIn     float64 // heat given, and taken in through the border where it came in on balance
+	HeatOut    float64 // heat that went out through the border on balance
+	Stored     float64 // gain of stored energy of all nodes
+	Throughput float64 // energies through the border without sign, never the net of a flow that turned
+	LedgerGap  float64 // what the ledger misses, summed over nodes and dissipators without sign
+	// IndependentGap is what the recount misses, summed over nodes without sign. It bounds the gap of every
+	// part of the network, of one node as of the whole; an error in a flow between two nodes counts on both
+	// sides and cannot cancel, as it would in the balance of the whole.
+	IndependentGap float64
 	Nodes          []NodeLine
 	Paths          []PathLine
 	Dissipators    []DissipatorLine

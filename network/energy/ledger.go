@@ -6,27 +6,19 @@ import (
 	"workheat/network/element"
 )
 
-// roundOff is what the ledger may miss, as a share of the book's scale: well above the sum of roundings of a
-// run of many thousand steps, and far below any error of a law.
-const roundOff = 1e-11
-
 func abs(x float64) float64 { return math.Abs(x) }
 
 // ledger fills the lines and totals of layer 1 from the quadratures.
-func (b *Book) ledger(r *Run) {
-	states := 0
+func (b *Book) ledger(r *Run, c *count, s *survey) {
 	for _, n := range r.Nodes {
 		line := NodeLine{Name: n.Name, Held: n.State < 0}
 		if n.Capacity != nil {
 			line.Stored = n.EndState
 		}
-		if n.State >= 0 {
-			states++
-		}
 		b.Nodes = append(b.Nodes, line)
 	}
-	for _, p := range r.Paths {
-		b.addPath(r, p)
+	for i, p := range r.Paths {
+		b.addPath(r, p, &c.paths[i])
 	}
 	check := Check{Layer: 1, Name: "ledger", Unit: "J",
 		About: "each node's stored energy against all that was carried to it, each dissipator's work against its heat"}
@@ -45,13 +37,18 @@ func (b *Book) ledger(r *Run) {
 		check.add(d.Gap, d.Name)
 	}
 	b.LedgerGap = check.Gap
-	check.Allowed = roundOff * b.scale()
-	check.Passed = check.Gap <= check.Allowed
+	check.Allowed = roundOff*b.scale(s) + s.flowing
+	check.close()
 	b.Checks = append(b.Checks, check)
 }
 
-// addPath books one path's total.
-func (b *Book) addPath(r *Run, p Path) {
+// scale is the energy [J] that was moved, which gaps are measured against: through the border, or, where
+// less than that passed it, within the network.
+func (b *Book) scale(s *survey) float64 { return math.Max(b.Throughput, s.swing) }
+
+// addPath books one path's total. Its part of the throughput is the same without sign, or, when the flow
+// went to and fro, what the recount found of it.
+func (b *Book) addPath(r *Run, p Path, y *tally) {
 	if p.Meter {
 		b.dissipator(p.Element).Work += p.Total
 		return
@@ -78,7 +75,11 @@ func (b *Book) addPath(r *Run, p Path) {
 	if toOut {
 		in = -in
 	}
-	b.Throughput += abs(in)
+	if y.forth && y.reverse {
+		b.Throughput += math.Max(abs(in), y.size)
+	} else {
+		b.Throughput += abs(in)
+	}
 	switch {
 	case p.Section == element.Dissipators:
 		b.WorkIn += in
@@ -87,18 +88,6 @@ func (b *Book) addPath(r *Run, p Path) {
 	default:
 		b.HeatOut -= in
 	}
-}
-
-// scale is the size of the energies that the run moved, against which gaps are judged: the throughput, or what
-// one path carried inside on balance if that is more. A network without a border has no throughput at all.
-func (b *Book) scale() float64 {
-	most := b.Throughput
-	for _, p := range b.Paths {
-		if p.Inside {
-			most = max(most, abs(p.Net))
-		}
-	}
-	return most
 }
 
 // border reports whether an end is not inside: held, or the world.
@@ -112,12 +101,4 @@ func (b *Book) dissipator(name string) *DissipatorLine {
 	}
 	b.Dissipators = append(b.Dissipators, DissipatorLine{Name: name, Expected: math.NaN()})
 	return &b.Dissipators[len(b.Dissipators)-1]
-}
-
-// add adds a gap to a check's sum and remembers where the largest was.
-func (c *Check) add(gap float64, where string) {
-	if c.Where == "" || abs(gap) > c.largest {
-		c.Where, c.largest = where, abs(gap)
-	}
-	c.Gap += abs(gap)
 }

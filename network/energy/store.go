@@ -63,3 +63,44 @@ func (s *store) temperature(u float64) float64 {
 	}
 	return s.x[i-1] + d
 }
+
+// What the dense output makes of a jump, and of a break of slope, of a capacity within its step. Chosen by
+// trial: on a latent heat as a step of the table and on the steel of EN 1993-1-2, at tolerances from 1e-3 to
+// 1e-9, the gap of the recount came to seven tenths of it at the most.
+const (
+	atJump  = 1.0 / 32
+	atBreak = 1.0 / 200
+)
+
+// kink returns by how much dT/du [K/J] changes at corner k for a state that moves by an energy [J] past it:
+// at a jump of the capacity at once, at a break of its slope by and by. It is weighted by what the dense
+// output makes of either.
+func (s *store) kink(k int, moved float64) float64 {
+	c := s.c[k]
+	if k+1 < len(s.x) && s.x[k+1] == s.x[k] {
+		return atJump * abs(1/s.c[k+1]-1/c)
+	}
+	return atBreak * abs(s.slope(k)-s.slope(k-1)) * moved / (c * c * c)
+}
+
+// slope returns the slope of the piece from corner k on; zero outside the corners and at a jump.
+func (s *store) slope(k int) float64 {
+	if k < 0 || k+1 >= len(s.x) || s.x[k+1] == s.x[k] {
+		return 0
+	}
+	return (s.c[k+1] - s.c[k]) / (s.x[k+1] - s.x[k])
+}
+
+// value returns the ordinate of the curve at x; at a jump that on the left.
+func (s *store) value(x float64) float64 {
+	last := len(s.x) - 1
+	if x <= s.x[0] {
+		return s.c[0]
+	}
+	if x >= s.x[last] {
+		return s.c[last]
+	}
+	i := sort.SearchFloat64s(s.x, x) // x[i-1] < x <= x[i]
+	w := (x - s.x[i-1]) / (s.x[i] - s.x[i-1])
+	return (1-w)*s.c[i-1] + w*s.c[i]
+}

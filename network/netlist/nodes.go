@@ -5,6 +5,7 @@ import (
 	"math"
 
 	"workheat/network/diag"
+	"workheat/network/duty"
 	"workheat/network/element"
 	"workheat/network/unit"
 )
@@ -15,9 +16,11 @@ var nodeKeys = []string{"mass", "material", "heat capacity", "massless", "held",
 const defaultStart = 293.15
 
 // nodes reads all nodes, those with a state first.
-func (r *reader) nodes(v, root *value) {
+func (r *reader) nodes(root object) {
+	v := root.get("nodes")
+	r.noNodes = true
 	if v == nil {
-		r.list.At(r.src.Span(root.start, root.start+1), `the key "nodes" is missing`, "declare at least one node")
+		r.list.At(r.brace(root), `the key "nodes" is missing`, "declare at least one node")
 		return
 	}
 	o, ok := r.object(v, "nodes", nil)
@@ -25,26 +28,17 @@ func (r *reader) nodes(v, root *value) {
 		return
 	}
 	var held []nodeDraft
-	order := []string{}
-	seen := map[string]bool{}
-	for i := range o.value.members {
-		m := &o.value.members[i]
-		if m.key == "about" || seen[m.key] {
-			continue
-		}
-		seen[m.key] = true
-		if m.key == "" {
-			r.list.At(r.src.Span(m.start, m.end), "a node needs a name", "")
-			continue
-		}
+	var order []string
+	r.entries(o, func(m *member) {
+		r.named(m, "a node")
 		order = append(order, m.key)
 		d := r.node(m)
 		if d.node.Form == element.Held {
 			held = append(held, d)
-			continue
+			return
 		}
 		r.addNode(d)
-	}
+	})
 	for _, d := range held {
 		r.addNode(d)
 	}
@@ -53,8 +47,10 @@ func (r *reader) nodes(v, root *value) {
 	}
 	if len(order) == 0 {
 		r.list.At(r.span(v), "there is no node", "declare at least one node with a mass or a heat capacity")
+		return
 	}
-	r.used = make([]bool, len(r.net.Nodes))
+	r.noNodes = false
+	r.used, r.fed = make([]bool, len(r.net.Nodes)), make([]bool, len(r.net.Nodes))
 }
 
 // A nodeDraft is a node on its way into the list.
@@ -75,67 +71,78 @@ func (r *reader) addNode(d nodeDraft) {
 
 // node reads one node. After a fault it still returns a node that others can refer to.
 func (r *reader) node(m *member) nodeDraft {
-	d := nodeDraft{at: r.src.Span(m.start, m.end)}
+	d := nodeDraft{at: r.keySpan(m)}
 	d.node = element.Node{Name: m.key, Form: element.Stored, Start: defaultStart, Capacity: element.Constant(1)}
 	o, ok := r.object(&m.value, "a node", nodeKeys)
 	if !ok {
+		d.node.Start = math.NaN()
 		return d
 	}
-	r.form(o, m, &d)
+	r.form(o, &d)
 	if v := o.get("start"); v != nil {
 		if d.node.Form == element.Held {
-			r.list.At(r.span(v), "a held node has no start", `its temperature is what "held" says from the beginning`)
-		} else if t, ok := r.quantity(v, unit.Temperature); ok {
-			d.node.Start = t
+			r.list.At(r.keyOf(o, "start"), "a held node has no start", `its temperature is what "held" says from the beginning`)
+		} else if d.node.Start, ok = r.quantity(v, unit.Temperature); !ok {
+			d.node.Start = math.NaN()
 		}
 	}
 	d.limits = r.limits(o.get("limits"), &d)
 	return d
 }
 
-// form finds out what the node's temperature follows from: exactly one way must be given.
-func (r *reader) form(o object, m *member, d *nodeDraft) {
-	mass, capacity := o.get("mass"), o.get("heat capacity")
-	massless, held := o.get("massless"), o.get("held")
-	var ways []*value
-	for _, v := range []*value{mass, capacity, massless, held} {
-		if v != nil {
-			ways = append(ways, v)
+// ways are the keys of which a node has exactly one: what its temperature follows from.
+var ways = []string{"mass", "heat capacity", "massless", "held"}
+
+// form finds out what the node's temperature follows from.
+func (r *reader) form(o object, d *nodeDraft) {
+	var way *member
+	members := o.value.members()
+	for i := range members {
+		m := &members[i]
+		switch {
+		case m.twice || !contains(ways, m.key):
+		case m.key == "massless" && m.value.kind != 't':
+			r.list.At(r.span(&m.value), `"massless" can only be true`, "remove the key if the node has a mass or is held")
+			if way == nil && len(members) == 1 {
+				return
+			}
+		case way != nil:
+			r.list.Add(diag.Problem{At: r.keySpan(m), Text: fmt.Sprintf("a node cannot have both %s and %s", quote(way.key), quote(m.key)),
+				Help: "keep one of them", See: []diag.Note{{At: r.keySpan(way), Text: "the other one"}}})
+		default:
+			way = m
 		}
 	}
-	switch {
-	case len(ways) == 0:
+	if way == nil {
 		r.list.At(d.at, "the node has no heat capacity",
 			`give it "mass" and "material", or "heat capacity", or "massless": true, or hold it at a temperature with "held"`)
 		return
-	case len(ways) > 1:
-		r.list.At(r.span(ways[1]), "the node has more than one of mass, heat capacity, massless and held", "keep one of them")
-		if held != nil {
-			d.node.Form = element.Held
-		}
-		return
 	}
-	if material := o.get("material"); material != nil && mass == nil {
-		r.list.At(r.span(material), "a material without a mass has no effect", `add "mass", or remove the material`)
+	if o.get("material") != nil && o.get("mass") == nil {
+		r.list.At(r.keyOf(o, "material"), "a material without a mass has no effect", `add "mass", or remove the material`)
 	}
-	switch {
-	case mass != nil:
-		r.massive(o, mass, d)
-	case capacity != nil:
-		if c, ok := r.capacity(capacity); ok {
+	r.follow(o, way, d)
+}
+
+// follow reads what the node's temperature follows from.
+func (r *reader) follow(o object, way *member, d *nodeDraft) {
+	v := &way.value
+	switch way.key {
+	case "mass":
+		r.massive(o, v, d)
+	case "heat capacity":
+		if c, ok := r.capacity(v); ok {
 			d.node.Capacity = c
 		}
-	case massless != nil:
+	case "massless":
 		d.node.Form, d.node.Capacity = element.Massless, nil
-		if massless.kind != 't' {
-			r.list.At(r.span(massless), `"massless" can only be true`, "remove the key if the node has a mass")
-		}
 	default:
 		d.node.Form, d.node.Capacity = element.Held, nil
-		d.node.Signal, _ = r.signal(held, "the held temperature", unit.Temperature, anyValue)
-		if d.node.Signal == 0 {
-			d.node.Signal = r.constantSignal(defaultStart)
+		signal, ok := r.signal(v, "the held temperature", unit.Temperature, anyValue)
+		if !ok {
+			signal = r.constantSignal(defaultStart)
 		}
+		d.node.Signal = signal
 	}
 }
 
@@ -152,32 +159,43 @@ func (r *reader) massive(o object, mass *value, d *nodeDraft) {
 	}
 	mat, ok := r.material(v)
 	if ok && okMass {
-		d.material = mat
-		d.node.Capacity = mat.Capacity.Scaled(m)
+		d.material, d.node.Capacity = mat, r.capacityOf(mat, m)
 	}
 }
 
-func list(names []string) string {
-	text := ""
-	for i, n := range names {
-		if i > 0 {
-			text += ", "
-		}
-		text += n
+// A lump is a mass of a material.
+type lump struct {
+	of   *element.Material
+	mass float64
+}
+
+// capacityOf returns the heat capacity of a lump; equal lumps share it.
+func (r *reader) capacityOf(of *element.Material, mass float64) *element.Curve {
+	key := lump{of, mass}
+	c, ok := r.capacities[key]
+	if !ok {
+		c = of.Capacity.Scaled(mass)
+		r.capacities[key] = c
 	}
-	return text
+	return c
 }
 
 // material finds a material by its name.
 func (r *reader) material(v *value) (*element.Material, bool) {
+	names := r.cat.MaterialNames()
 	if v.kind != '"' {
-		r.list.At(r.span(v), "the name of a material is due, not "+kindNames[v.kind], "")
+		r.list.At(r.span(v), "the name of a material is due, not "+kindNames[v.kind], "one of: "+list(names))
 		return nil, false
 	}
-	if m := r.cat.Material(v.text); m != nil {
+	name := v.text
+	if m := r.cat.Material(name); m != nil {
+		if m.Doubtful != "" {
+			r.doubts = append(r.doubts, doubt{r.span(v), m})
+		}
 		return m, true
 	}
-	r.list.At(r.span(v), fmt.Sprintf("the material %s is not known", quote(v.text)), r.suggest(v.text, r.cat.MaterialNames()))
+	_, help := r.suggest(name, names)
+	r.list.At(r.span(v), fmt.Sprintf("the material %s is not known", quote(name)), help)
 	return nil, false
 }
 
@@ -190,12 +208,17 @@ func (r *reader) capacity(v *value) (*element.Curve, bool) {
 		}
 		return element.Constant(x), true
 	}
-	c, ok := r.table(v, "the heat capacity", "temperature", unit.Temperature, unit.HeatCapacity)
-	if ok && !(c.Least() > 0) {
-		r.list.At(r.span(v), "the heat capacity must be above zero at every temperature", "")
+	t, ok := r.table(v, "the heat capacity", "temperature", unit.Temperature, unit.HeatCapacity)
+	if !ok {
 		return nil, false
 	}
-	return c, ok
+	ok = t.every(r, func(y float64) string {
+		if y > 0 {
+			return ""
+		}
+		return "the heat capacity must be above zero at every temperature"
+	})
+	return t.curve, ok
 }
 
 // limits reads the temperatures that a node must not pass.
@@ -208,36 +231,45 @@ func (r *reader) limits(v *value, d *nodeDraft) []element.Limit {
 		return nil
 	}
 	var limits []element.Limit
-	for i := range o.value.members {
-		m := &o.value.members[i]
-		if m.key == "about" {
-			continue
-		}
+	r.entries(o, func(m *member) {
+		r.named(m, "a limit")
 		t, ok := r.quantity(&m.value, unit.Temperature)
-		if !ok {
-			continue
+		switch {
+		case !ok:
+		case d.node.Form == element.Held:
+			r.list.Warn(r.keySpan(m), "a limit of a held node tests only what is given", "put it on a node whose temperature is computed")
+		case d.node.Form == element.Stored && t < d.node.Start:
+			r.list.At(r.span(&m.value), "the limit is below the start temperature of the node, "+unit.Temperature.Format(d.node.Start, 4),
+				"a node that starts above its limit has no margin to report: check both")
 		}
-		if d.node.Form == element.Stored && t < d.node.Start {
-			r.list.At(r.span(&m.value), fmt.Sprintf("the limit is below the start temperature of the node, %s", unit.Temperature.Format(d.node.Start, 4)),
-				"a node that starts above its limit has no margin to report")
-			continue
+		if ok {
+			limits = append(limits, element.Limit{Name: m.key, Temperature: t})
 		}
-		limits = append(limits, element.Limit{Name: m.key, Temperature: t})
-	}
+	})
 	return limits
 }
 
-// findNode finds a node by its name.
-func (r *reader) findNode(v *value, what string) (int, bool) {
-	if v.kind != '"' {
-		r.list.At(r.span(v), fmt.Sprintf("%s: the name of a node is due, not %s", what, kindNames[v.kind]), "")
-		return 0, false
+// findNode finds a node by its name. One that was nearly named is found as well, but not ok; when none is,
+// the index is -1.
+func (r *reader) findNode(v *value) (i int, ok bool) {
+	name, ok := r.text(v, "a node")
+	if !ok {
+		r.torn = true
+		return -1, false
 	}
-	if i, ok := r.nodeAt[v.text]; ok {
+	if i, ok := r.nodeAt[name]; ok {
 		return i, true
 	}
-	r.list.At(r.span(v), fmt.Sprintf("the node %s is not declared", quote(v.text)), r.suggest(v.text, r.nodeNames()))
-	return 0, false
+	if r.noNodes || r.full() {
+		return -1, false
+	}
+	near, help := r.suggest(name, r.nodeNames())
+	r.list.At(r.span(v), fmt.Sprintf("the node %s is not declared", quote(name)), help)
+	if near == "" {
+		r.torn = true
+		return -1, false
+	}
+	return r.nodeAt[near], false
 }
 
 func (r *reader) nodeNames() []string {
@@ -253,7 +285,7 @@ func (r *reader) start(i int) float64 {
 	n := r.net.Nodes[i]
 	switch n.Form {
 	case element.Held:
-		return r.net.Tables[n.Signal-firstTable].At(0)
+		return r.net.Tables[n.Signal-duty.FirstTable].At(0)
 	case element.Stored:
 		return n.Start
 	}

@@ -6,6 +6,7 @@ import (
 
 	"workheat/network/diag"
 	"workheat/network/duty"
+	"workheat/network/element"
 	"workheat/network/unit"
 )
 
@@ -27,125 +28,150 @@ var verbs = []verb{
 
 var phaseKeys = []string{"brake", "speed up", "hold", "rest", "follow", "repeat"}
 
+// A phasePlace is where a phase stands.
+type phasePlace struct {
+	verb diag.Span
+	body object
+}
+
 // duty reads the phases and checks that the speeds join up and that each phase ends.
-func (r *reader) duty(v, root *value) {
+func (r *reader) duty(root object) {
+	v := root.get("duty")
 	if v == nil {
-		r.list.At(r.src.Span(root.start, root.start+1), `the key "duty" is missing`, `say what happens, such as "duty": [ { "rest": { "for": "10 min" } } ]`)
+		r.list.At(r.brace(root), `the key "duty" is missing`, `say what happens, such as "duty": [ { "rest": { "for": "10 min" } } ]`)
 		return
 	}
-	if v.kind != '[' || len(v.items) == 0 {
-		r.list.At(r.span(v), "the duty must be a list of phases with at least one entry", "known phases: "+list(phaseKeys))
+	if len(v.items()) == 0 {
+		text := "the duty has no phase"
+		if v.kind != '[' {
+			text = "the duty is " + kindNames[v.kind] + ", but a list of phases in brackets [ ] is due"
+		}
+		r.list.At(r.span(v), text, "known phases: "+list(phaseKeys))
 		return
 	}
-	phases, ok := r.phases(v, "")
-	if !ok {
+	r.net.Duty.Phases = r.phaseList(v, "")
+	program := r.net.Duty
+	if r.vehicle == nil && (r.net.Body != "" || r.bodiless) {
+		// The body was reported, or that there is none: what follows from it alone must not be reported again.
+		program.Vehicle = &element.Vehicle{Mass: 1, Rotating: 1, Wheel: math.NaN()}
+	}
+	if r.full() {
 		return
 	}
-	r.net.Duty.Phases = phases
-	if r.net.Body != "" && r.vehicle == nil {
-		return
-	}
-	r.net.Duty.Check(func(place int, text, help string) { r.list.At(r.places[place], text, help) })
+	program.Check(func(place int, key, text, help string) {
+		p := r.phases[place]
+		if v := p.body.get(key); v != nil {
+			r.list.At(r.span(v), text, help)
+			return
+		}
+		r.list.At(p.verb, text, help)
+	})
 }
 
-// phases reads a list of phases.
-func (r *reader) phases(v *value, label string) ([]duty.Phase, bool) {
-	var phases []duty.Phase
-	good := true
-	for i := range v.items {
-		p, ok := r.phase(&v.items[i], fmt.Sprintf("%s%d", label, i+1))
-		phases = append(phases, p)
-		good = good && ok
+// phaseList reads a list of phases.
+func (r *reader) phaseList(v *value, label string) []duty.Phase {
+	items := v.items()
+	phases := make([]duty.Phase, 0, len(items))
+	for i := range items {
+		if r.full() {
+			break
+		}
+		phases = append(phases, r.phase(&items[i], fmt.Sprintf("%s%d", label, i+1)))
 	}
-	return phases, good
+	return phases
 }
 
-// phase reads one phase.
-func (r *reader) phase(v *value, label string) (duty.Phase, bool) {
+// phase reads one phase. One with a fault is marked as told.
+func (r *reader) phase(v *value, label string) duty.Phase {
 	none := duty.None
 	p := duty.Phase{
 		Label: label, From: none, To: none, Deceleration: none, Torque: none, Acceleration: none, In: none,
-		Speed: none, Grade: none, For: none, Over: none, AtMost: none, Every: none, Place: len(r.places),
+		Speed: none, Grade: none, For: none, Over: none, AtMost: none, Every: none, Place: len(r.phases), Told: true,
 	}
-	r.places = append(r.places, r.span(v))
-	if v.kind == '{' && (object{v}).get("repeat") != nil {
-		return p, r.repeat(v, &p)
+	r.phases = append(r.phases, phasePlace{verb: r.src.Span(int(v.start), int(v.start)+1)})
+	whole := object{v}
+	if whole.get("repeat") != nil {
+		p.Told = !r.repeat(v, &p)
+		return p
 	}
-	o, ok := r.object(v, "a phase", phaseKeys)
-	if !ok {
-		return p, false
+	if _, ok := r.object(v, "a phase", phaseKeys); !ok {
+		return p
 	}
-	found := -1
-	for i := range verbs {
-		if x := o.get(verbs[i].name); x != nil {
-			if found >= 0 {
-				r.list.At(r.span(v), "a phase holds both "+verbs[found].name+" and "+verbs[i].name, "make them two phases, each in its own braces")
-				return p, false
-			}
-			found = i
-		}
+	if whole.get("repeat") != nil { // it was nearly named so
+		r.repeat(v, &p)
+		return p
 	}
-	if found < 0 {
-		if len(v.members) == 0 {
-			r.list.At(r.span(v), "the phase is empty", "known phases: "+list(phaseKeys))
-		}
-		return p, false
+	k, m := r.verb(whole)
+	if m == nil {
+		return p
 	}
-	k := verbs[found]
 	p.Verb, p.Label = k.verb, label+" "+k.name
-	body := o.get(k.name)
-	inner, ok := r.object(body, k.name, k.keys)
-	if !ok {
-		return p, false
+	r.phases[p.Place].verb = r.keySpan(m)
+	body, ok := r.object(&m.value, quote(k.name), k.keys)
+	if ok {
+		r.phases[p.Place].body = body
+		p.Told = !r.fill(&p, body)
 	}
-	r.places[p.Place] = r.src.Span(keySpan(v, k.name))
-	return p, r.fill(&p, inner)
+	return p
 }
 
-// keySpan returns the place of a key of an object.
-func keySpan(v *value, key string) (start, end int) {
-	for i := range v.members {
-		if v.members[i].key == key {
-			return v.members[i].start, v.members[i].end
+// verb finds the one verb of a phase.
+func (r *reader) verb(o object) (k verb, m *member) {
+	for _, each := range verbs {
+		other := o.member(each.name)
+		switch {
+		case other == nil:
+		case m == nil:
+			k, m = each, other
+		default:
+			first, second := m, other
+			if first.start > second.start {
+				first, second = second, first
+			}
+			r.list.Add(diag.Problem{At: r.keySpan(second), Text: fmt.Sprintf("a phase holds both %s and %s", quote(first.key), quote(second.key)),
+				Help: "make them two phases, each in its own braces", See: []diag.Note{{At: r.keySpan(first), Text: "the first"}}})
+			return k, nil
 		}
 	}
-	return v.start, v.end
+	if len(o.value.members()) == 0 || len(o.value.members()) == 1 && o.get("about") != nil {
+		r.list.At(r.span(o.value), "the phase is empty", "known phases: "+list(phaseKeys))
+	}
+	return k, m
 }
 
 // repeat reads a repeated list of phases.
 func (r *reader) repeat(v *value, p *duty.Phase) bool {
-	o, ok := r.object(v, "a repeat", []string{"repeat", "every", "phases"})
-	if !ok {
-		return false
-	}
+	o, _ := r.object(v, "a repeat", []string{"repeat", "every", "phases"})
 	p.Verb = duty.Repeat
+	r.phases[p.Place] = phasePlace{r.keyOf(o, "repeat"), o}
 	count := o.get("repeat")
-	n, okCount := r.quantity(count, unit.Number)
-	if okCount && (n < 1 || n != math.Floor(n) || n > 1e6) {
+	n, ok := r.quantity(count, unit.Number)
+	if ok && (n < 1 || n != math.Floor(n) || n > 1e6) {
 		r.list.At(r.span(count), "a repeat needs a whole number of rounds, from 1 to 1000000", "")
-		okCount = false
+		ok = false
 	}
-	p.Count = int(n)
+	p.Count = 1
+	if ok {
+		p.Count = int(n)
+	}
 	if every := o.get("every"); every != nil {
-		x, ok := r.quantity(every, unit.Time)
-		okCount = ok && r.positive(every, x, "the interval") && okCount
+		x, okEvery := r.quantity(every, unit.Time)
+		ok = okEvery && r.positive(every, x, "the interval") && ok
 		p.Every = x
 	}
 	phases := o.get("phases")
-	if phases == nil || phases.kind != '[' || len(phases.items) == 0 {
-		at := r.span(v)
+	if phases == nil || len(phases.items()) == 0 {
+		at := r.keyOf(o, "repeat")
 		if phases != nil {
 			at = r.span(phases)
 		}
 		r.list.At(at, `a repeat needs "phases", a list with at least one entry`, "")
 		return false
 	}
-	r.places[p.Place] = r.src.Span(keySpan(v, "repeat"))
 	label := p.Label
 	p.Label = label + " repeat"
-	inner, ok := r.phases(phases, label+".")
-	p.Phases = inner
-	return ok && okCount
+	p.Phases = r.phaseList(phases, label+".")
+	return ok
 }
 
 // A slot is one number of a phase: its key, what it is, where it goes, and whether it must be above zero.
@@ -163,11 +189,10 @@ func (r *reader) fill(p *duty.Phase, o object) bool {
 		{"deceleration", unit.Acceleration, &p.Deceleration, true}, {"torque", unit.Torque, &p.Torque, true},
 		{"acceleration", unit.Acceleration, &p.Acceleration, true}, {"in", unit.Time, &p.In, true},
 		{"for", unit.Time, &p.For, true}, {"over", unit.Length, &p.Over, true}, {"at most", unit.Time, &p.AtMost, true},
+		{"speed", unit.Speed, &p.Speed, false},
 	}
 	if p.Verb == duty.Follow {
-		slots = nil
-	} else {
-		slots = append(slots, slot{"speed", unit.Speed, &p.Speed, false})
+		slots = nil // there "speed" and "time" name columns
 	}
 	good := true
 	for _, s := range slots {
@@ -178,7 +203,7 @@ func (r *reader) fill(p *duty.Phase, o object) bool {
 		x, ok := r.quantity(v, s.want)
 		switch {
 		case !ok:
-		case s.positive && !(x > 0):
+		case s.positive:
 			ok = r.positive(v, x, quote(s.key))
 		case x < 0:
 			r.list.At(r.span(v), quote(s.key)+" must not be below zero", "the vehicle only goes forward")
@@ -190,7 +215,7 @@ func (r *reader) fill(p *duty.Phase, o object) bool {
 		good = good && ok
 	}
 	good = r.grade(p, o.get("grade")) && good
-	good = r.until(p, o.get("until")) && good
+	good = r.until(p, o) && good
 	if p.Verb == duty.Follow {
 		good = r.trace(p, o) && good
 	}
@@ -202,19 +227,23 @@ func (r *reader) grade(p *duty.Phase, v *value) bool {
 	if v == nil {
 		return true
 	}
+	x, angle := 0.0, false
 	if v.kind == '"' {
-		if q, fault := unit.Parse(v.text, r.params); fault == nil && q.Dim == unit.Angle.Dim() {
-			p.Grade = math.Tan(q.Value)
-			return r.gradeRange(p, v)
+		q, fault := unit.Parse(v.text, r.params)
+		angle = fault == nil && q.Dim == unit.Angle.Dim()
+		x = math.Tan(q.Value)
+		if math.Abs(q.Value) >= math.Pi/2 {
+			x = math.Inf(1)
 		}
 	}
-	x, ok := r.quantity(v, unit.Number)
-	p.Grade = x
-	return ok && r.gradeRange(p, v)
-}
-
-func (r *reader) gradeRange(p *duty.Phase, v *value) bool {
-	if math.Abs(p.Grade) <= 1 {
+	if !angle {
+		var ok bool
+		if x, ok = r.quantity(v, unit.Number); !ok {
+			return false
+		}
+	}
+	if math.Abs(x) <= 1 {
+		p.Grade = x
 		return true
 	}
 	r.list.At(r.span(v), "a grade beyond 100 % is no road", `write it as rise over run: "6 %" uphill, "-6 %" downhill, or as an angle: "-3.4 deg"`)
@@ -222,73 +251,38 @@ func (r *reader) gradeRange(p *duty.Phase, v *value) bool {
 }
 
 // until reads the temperature that ends a phase.
-func (r *reader) until(p *duty.Phase, v *value) bool {
+func (r *reader) until(p *duty.Phase, phase object) bool {
+	v := phase.get("until")
 	if v == nil {
 		return true
 	}
-	o, ok := r.object(v, "until", []string{"node", "falls to", "rises to"})
+	o, ok := r.object(v, quote("until"), []string{"node", "falls to", "rises to"})
 	if !ok {
 		return false
 	}
 	node, falls, rises := o.get("node"), o.get("falls to"), o.get("rises to")
+	i := -1
 	if node == nil {
-		r.list.At(r.span(v), `the key "node" is missing`, "it names the node whose temperature ends the phase")
-		return false
-	}
-	i, ok := r.findNode(node, "until")
-	if (falls == nil) == (rises == nil) {
-		r.list.At(r.span(v), `exactly one of "falls to" and "rises to" is due`, "")
-		return false
+		r.list.At(r.keyOf(phase, "until"), `"until" names no node`, `add "node", whose temperature ends the phase`)
+	} else {
+		i, ok = r.findNode(node)
 	}
 	mark := falls
 	if mark == nil {
 		mark = rises
 	}
+	if (falls == nil) == (rises == nil) {
+		r.list.At(r.keyOf(phase, "until"), `"until" needs either "falls to" or "rises to"`, "exactly one of them")
+		return false
+	}
 	t, okT := r.quantity(mark, unit.Temperature)
+	if i < 0 || !ok || !okT {
+		return false
+	}
+	if n := r.net.Nodes[i]; n.Form == element.Held && r.net.Tables[n.Signal-duty.FirstTable].IsConstant() {
+		r.list.At(r.span(node), fmt.Sprintf("the node %s is held at one temperature: it neither falls nor rises", quote(n.Name)), `give "for", a time`)
+		return false
+	}
 	p.Until = &duty.Until{Node: i, Falls: falls != nil, Temperature: t}
-	return ok && okT
-}
-
-// trace reads a speed trace.
-func (r *reader) trace(p *duty.Phase, o object) bool {
-	file, rows := o.get("file"), o.get("table")
-	at := r.places[p.Place]
-	switch {
-	case (file == nil) == (rows == nil):
-		r.list.At(at, `a trace needs a "file" with columns of time and speed, or a "table"`, "exactly one of them")
-		return false
-	case file != nil:
-		c, ok := r.columns(o, "the trace", "time", "speed", unit.Time, unit.Speed)
-		if !ok {
-			return false
-		}
-		p.Trace = c
-	default:
-		c, ok := r.rows(rows, "the trace", unit.Time, unit.Speed)
-		if !ok {
-			return false
-		}
-		p.Trace = c
-	}
-	return r.usableTrace(p, at)
-}
-
-// usableTrace checks that a trace has a length and that the speed neither jumps nor turns negative.
-func (r *reader) usableTrace(p *duty.Phase, at diag.Span) bool {
-	x, y := p.Trace.X, p.Trace.Y
-	if len(x) < 2 || x[0] == x[len(x)-1] {
-		r.list.At(at, "a trace needs at least two rows at different times", "")
-		return false
-	}
-	for i := range x {
-		if y[i] < 0 {
-			r.list.At(at, fmt.Sprintf("the trace has a negative speed at %g s", x[i]), "the vehicle only goes forward")
-			return false
-		}
-		if i > 0 && x[i] == x[i-1] && y[i] != y[i-1] {
-			r.list.At(at, fmt.Sprintf("the speed jumps at %g s", x[i]), "a vehicle's speed cannot jump: give the rows different times")
-			return false
-		}
-	}
 	return true
 }

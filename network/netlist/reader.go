@@ -4,8 +4,7 @@ package netlist
 
 import (
 	"fmt"
-	"math"
-	"strings"
+	"strconv"
 
 	"workheat/network/diag"
 	"workheat/network/duty"
@@ -40,9 +39,9 @@ type declared struct {
 	section element.Section
 	name    string
 	at      diag.Span
+	value   *value
 	kind    *element.Kind
 	d       *element.Declaration
-	keys    map[string]diag.Span
 }
 
 // An Opener returns the content of a file that a netlist refers to by its name.
@@ -54,38 +53,113 @@ const (
 	DefaultAbs = 1e-6 // K
 )
 
-type reader struct {
-	src    *diag.Source
-	list   diag.List
-	cat    *element.Catalogue
-	open   Opener
-	net    *Netlist
-	params unit.Params
+// Bounds of the report. A file with more than maxFound problems is not read to its end.
+const (
+	maxShown = 100
+	maxFound = 1000
+)
 
-	nodeAt   map[string]int // index by name
-	nodeSpan []diag.Span
-	used     []bool // node is an end of some element
+type reader struct {
+	src  *diag.Source
+	list diag.List
+	cat  *element.Catalogue
+	open Opener
+	net  *Netlist
+
+	params  unit.Params
+	later   map[string]bool // parameters of the file that have not been read yet
+	reading string          // the parameter being read
+	lost    map[string]bool // parameters that were reported, or whose name cannot be used
+
+	nodeAt     map[string]int // index by name
+	capacities map[lump]*element.Curve
+	nodeSpan   []diag.Span
+	noNodes    bool // the nodes could not be read
+	links      [][2]int
+	used       []bool // node is an end of some element
+	fed        []bool // node takes heat that is not a flow from another node
+	torn       bool   // some element could not be placed: what links what is not known
+
+	kindKeys map[*element.Kind][]string // what may be written, by kind
 	vehicle  *element.Vehicle
 	body     map[string]bool // names of declared bodies, broken ones too
-	places   []diag.Span     // of duty phases
-	tables   map[string]int  // table signals by content
-	signals  object          // declared signals
-	files    map[string]*sheet
+	phases   []phasePlace
+
+	bodiless bool // a body that does not exist was reported
+
+	tables  map[string]int // table signals by content
+	signals map[string]*declaredSignal
+	files   map[string]*sheet
+
+	doubts []doubt // materials of doubtful data, as they were read
+
+	asked, compared int // see suggest
 }
 
 // Read reads a netlist. open may be nil when no other file may be read. The netlist is not usable when the
-// problems hold one that is not a warning.
+// problems hold one that is not a warning. At most 100 problems are returned, in order of place, and then
+// one that says how many more there are.
 func Read(src *diag.Source, cat *element.Catalogue, open Opener) (*Netlist, []diag.Problem) {
 	r := &reader{
-		src: src, cat: cat, open: open, params: unit.Params{}, nodeAt: map[string]int{}, body: map[string]bool{},
-		tables: map[string]int{}, files: map[string]*sheet{},
+		src: src, cat: cat, open: open,
+		params: unit.Params{}, later: map[string]bool{}, lost: map[string]bool{},
+		nodeAt: map[string]int{}, capacities: map[lump]*element.Curve{}, body: map[string]bool{},
+		kindKeys: map[*element.Kind][]string{},
+		tables:   map[string]int{}, signals: map[string]*declaredSignal{}, files: map[string]*sheet{},
 		net: &Netlist{Source: src, Rel: DefaultRel, Abs: DefaultAbs},
 	}
-	if root, ok := parse(src, &r.list); ok {
+	root, hush, ok := parse(src, &r.list)
+	syntax := r.list.Problems()
+	if ok {
+		r.list = diag.List{}
 		r.root(&root)
+		syntax = append(syntax, hushed(r.list.Problems(), hush)...)
 	}
-	return r.net, r.list.Problems()
+	return r.net, r.shown(syntax)
 }
+
+// hushed leaves out the problems that lie in places where a value was guessed.
+func hushed(problems []diag.Problem, hush []diag.Span) []diag.Problem {
+	if len(hush) == 0 {
+		return problems
+	}
+	var kept []diag.Problem
+	for _, p := range problems {
+		inside := false
+		for _, h := range hush {
+			inside = inside || p.At.Source == h.Source && p.At.Start >= h.Start && p.At.Start < h.End
+		}
+		if !inside {
+			kept = append(kept, p)
+		}
+	}
+	return kept
+}
+
+// shown sorts the problems and cuts a long list.
+func (r *reader) shown(problems []diag.Problem) []diag.Problem {
+	var all diag.List
+	for _, p := range problems {
+		all.Add(p)
+	}
+	sorted := all.Problems()
+	if len(sorted) <= maxShown {
+		return sorted
+	}
+	rest := sorted[maxShown:]
+	last := diag.Problem{At: r.src.Whole(), Text: fmt.Sprintf("… and %d more", len(rest)), Warning: true}
+	if r.full() {
+		last.Text = fmt.Sprintf("… and more than %d more", maxFound-maxShown-1)
+		last.Help = "the rest of the file was not read"
+	}
+	for _, p := range rest {
+		last.Warning = last.Warning && p.Warning
+	}
+	return append(sorted[:maxShown:maxShown], last)
+}
+
+// full reports whether so much is wrong that reading on helps nobody.
+func (r *reader) full() bool { return r.list.Len() >= maxFound }
 
 // topKeys are the keys of a netlist, in the order in which they are usually written.
 var topKeys = []string{
@@ -100,69 +174,42 @@ func (r *reader) root(v *value) {
 		return
 	}
 	r.version(o)
-	r.net.Title = r.textOf(o, "title")
-	r.parameters(o.get("parameters"))
-	if signals := o.get("signals"); signals != nil {
-		r.signals, _ = r.object(signals, "signals", nil)
+	for _, m := range o.value.members() {
+		r.torn = r.torn || !contains(topKeys, m.key) // it may have held elements
 	}
-	r.nodes(o.get("nodes"), v)
+	if title := o.get("title"); title != nil {
+		if title.kind != '"' {
+			r.list.At(r.span(title), `"title" is `+kindNames[title.kind]+", but text is due", "")
+		}
+		r.net.Title = title.text
+	}
+	r.parameters(o.get("parameters"))
+	r.declareSignals(o.get("signals"))
+	r.nodes(o)
 	r.bodies(o.get("bodies"))
 	for _, section := range []element.Section{element.Conductances, element.Sources, element.Dissipators} {
 		r.section(section, o.get(string(section)))
 	}
 	r.accuracy(o.get("accuracy"))
 	r.output(o.get("output"))
-	r.duty(o.get("duty"), v)
-	r.checkNetwork()
+	r.duty(o)
+	r.checkNetwork(o)
+	r.unusedSignals()
 	r.group()
+	r.doubtful()
 }
 
 func (r *reader) version(o object) {
 	v := o.get("workheat")
-	if v == nil {
-		r.list.At(r.src.Span(o.value.start, o.value.start+1), `the key "workheat" is missing`,
-			fmt.Sprintf(`write "workheat": %d as the first key: it is the version of the format`, Version))
-		return
-	}
-	if v.kind != '0' || v.text != fmt.Sprint(Version) {
-		r.list.At(r.span(v), "this version of the netlist format is not known",
-			fmt.Sprintf(`write "workheat": %d`, Version))
-	}
-}
-
-// parameters reads named quantities, each of which may use those before it.
-func (r *reader) parameters(v *value) {
-	if v == nil {
-		return
-	}
-	o, ok := r.object(v, "parameters", nil)
-	if !ok {
-		return
-	}
-	for i := range o.value.members {
-		m := &o.value.members[i]
-		if m.key == "about" {
-			continue
-		}
-		if fault := unit.NameFault(m.key); fault != nil {
-			r.list.At(r.src.Span(m.start, m.end), fault.Text, fault.Help)
-			continue
-		}
-		switch m.value.kind {
-		case '"':
-			q, fault := unit.Parse(m.value.text, r.params)
-			if fault != nil {
-				r.fault(&m.value, fault)
-				q = unit.Quantity{Value: math.NaN()}
-			}
-			r.params[m.key] = q
-		case '0':
-			if x, ok := r.plain(&m.value); ok {
-				r.params[m.key] = unit.Quantity{Value: x}
-			}
-		default:
-			r.list.At(r.span(&m.value), "a parameter is "+kindNames[m.value.kind]+", but a quantity is due",
-				`write text with a unit, such as "12 kg", or a plain number`)
+	help := fmt.Sprintf(`write "workheat": %d`, Version)
+	switch {
+	case v == nil:
+		r.list.At(r.brace(o), `the key "workheat" is missing`, help+" as the first key: it is the version of the format")
+	case v.kind != '0':
+		r.list.At(r.span(v), "the version of the format is "+kindNames[v.kind]+", but a number is due", help)
+	default:
+		if x, err := strconv.ParseFloat(v.text, 64); err != nil || x != Version {
+			r.list.At(r.span(v), fmt.Sprintf("version %s of the netlist format is not known here", v.text), help)
 		}
 	}
 }
@@ -181,8 +228,7 @@ func (r *reader) accuracy(v *value) {
 			if f < 1e-12 || f > 0.1 {
 				r.list.At(r.span(x), fmt.Sprintf("a relative tolerance of %g cannot be used", f), "give it between 1e-12 and 0.1; 1e-6 is usual")
 			} else {
-				r.net.Rel = f
-				r.net.Abs = f
+				r.net.Rel, r.net.Abs = f, f
 			}
 		}
 	}
@@ -211,114 +257,4 @@ func (r *reader) output(v *value) {
 			r.net.Every = f
 		}
 	}
-}
-
-// positive reports a value that is not above zero.
-func (r *reader) positive(v *value, x float64, what string) bool {
-	if x > 0 {
-		return true
-	}
-	r.list.At(r.span(v), what+" must be above zero", "")
-	return false
-}
-
-// An object is a JSON object whose keys have been checked.
-type object struct{ value *value }
-
-// get returns the value of a key, the last one if it stands twice, or nil.
-func (o object) get(key string) *value {
-	if o.value == nil {
-		return nil
-	}
-	for i := len(o.value.members) - 1; i >= 0; i-- {
-		if o.value.members[i].key == key {
-			return &o.value.members[i].value
-		}
-	}
-	return nil
-}
-
-// members returns the members of the object.
-func (o object) members() []member {
-	if o.value == nil {
-		return nil
-	}
-	return o.value.members
-}
-
-// object checks that v is an object, that no key stands twice and, unless known is nil, that every key is
-// known; "about" is allowed everywhere.
-func (r *reader) object(v *value, what string, known []string) (object, bool) {
-	if v.kind != '{' {
-		r.list.At(r.span(v), fmt.Sprintf("%s is %s, but an object in braces { } is due", what, kindNames[v.kind]), "")
-		return object{}, false
-	}
-	first := make(map[string]int, len(v.members))
-	for i := range v.members {
-		m := &v.members[i]
-		at := r.src.Span(m.start, m.end)
-		if j, ok := first[m.key]; ok {
-			r.list.Add(diag.Problem{At: at, Text: fmt.Sprintf("the key %s stands twice", quote(m.key)),
-				Help: "remove one, or give it another name",
-				See:  []diag.Note{{At: r.src.Span(v.members[j].start, v.members[j].end), Text: "the first one"}}})
-			continue
-		}
-		first[m.key] = i
-		if known != nil && m.key != "about" && !contains(known, m.key) {
-			r.list.At(at, fmt.Sprintf("the key %s is not known in %s", quote(m.key), what), r.suggest(m.key, known))
-		}
-		if m.key == "about" && known != nil && m.value.kind != '"' {
-			r.list.At(r.span(&m.value), `"about" is `+kindNames[m.value.kind]+", but text is due", "")
-		}
-	}
-	return object{v}, true
-}
-
-func contains(list []string, s string) bool {
-	for _, x := range list {
-		if x == s {
-			return true
-		}
-	}
-	return false
-}
-
-// quote puts a name in quotes, cut if it is long.
-func quote(name string) string {
-	if runes := []rune(name); len(runes) > 60 {
-		name = string(runes[:57]) + "..."
-	}
-	return `"` + name + `"`
-}
-
-// suggest words the cure for an unknown name.
-func (r *reader) suggest(name string, known []string) string {
-	if near := diag.Nearest(name, known); near != "" {
-		return "did you mean " + quote(near) + "?"
-	}
-	if len(known) == 0 {
-		return ""
-	}
-	shown := known
-	if len(shown) > 12 {
-		shown = shown[:12]
-	}
-	text := "known here: " + strings.Join(shown, ", ")
-	if len(shown) < len(known) {
-		text += fmt.Sprintf(" and %d more", len(known)-len(shown))
-	}
-	return text
-}
-
-// textOf returns the text of a key, or nothing.
-func (r *reader) textOf(o object, key string) string {
-	v := o.get(key)
-	if v == nil {
-		return ""
-	}
-	if v.kind != '"' {
-		r.list.At(r.span(v), fmt.Sprintf("%s is %s, but text is due", quote(key), kindNames[v.kind]), "")
-		return ""
-	}
-	return v.text
 }

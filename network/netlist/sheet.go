@@ -16,42 +16,51 @@ import (
 
 // A sheet is a CSV file: a header with "name [unit]" in each column, then numbers.
 type sheet struct {
-	src  *diag.Source
-	head []string
-	rows [][]string
-	line []int // of each row
+	src     *diag.Source
+	skip    int // bytes of the byte order mark
+	head    []string
+	columns [][]float64
+	bad     []int // by column: the first row that holds no number, or -1
 }
 
-// columns reads two columns of a CSV file as a curve. The keys xKey and yKey give their names; without
+// A column is what is looked for in a sheet: the key that may name it, and what it must hold.
+type column struct {
+	key  string
+	want unit.Want
+}
+
+// columns reads two columns of a CSV file as a curve. Keys of the object may give their names; without
 // them the first and the second column are taken.
-func (r *reader) columns(o object, what, xKey, yKey string, x, y unit.Want) (*element.Curve, bool) {
+func (r *reader) columns(o object, what string, x, y column) (table, bool) {
 	file := o.get("file")
 	if file.kind != '"' || file.text == "" {
 		r.list.At(r.span(file), "the name of a file is due", "")
-		return nil, false
+		return table{}, false
 	}
 	s, ok := r.sheet(file)
 	if !ok {
-		return nil, false
+		return table{}, false
 	}
-	xs, okX := r.column(s, o, xKey, 0, x)
-	ys, okY := r.column(s, o, yKey, 1, y)
+	t := table{see: []diag.Note{{At: r.span(file), Text: "the file is used here"}}}
+	xs, first, okX := r.column(s, o, x, 0, t.see)
+	ys, second, okY := r.column(s, o, y, 1, t.see)
 	if !okX || !okY {
-		return nil, false
+		return table{}, false
 	}
 	if len(xs) == 0 {
 		r.list.At(r.span(file), what+": the file has no rows of numbers", "")
-		return nil, false
+		return table{}, false
 	}
 	for i := 1; i < len(xs); i++ {
 		if xs[i] < xs[i-1] || i > 1 && xs[i] == xs[i-2] {
-			r.list.Add(diag.Problem{At: s.place(s.line[i]), Text: fmt.Sprintf("the %s does not rise here", x.Name),
-				Help: "sort the rows; two rows at one place make a jump, a third has no meaning",
-				See:  []diag.Note{{At: r.span(file), Text: "the file is used here"}}})
-			return nil, false
+			r.list.Add(diag.Problem{At: s.cell(i+1, first), Text: fmt.Sprintf("the %s does not rise here", x.want.Name),
+				Help: "sort the rows; two rows at one place make a jump, a third has no meaning", See: t.see})
+			return table{}, false
 		}
 	}
-	return element.MustCurve(xs, ys), true
+	t.curve = element.MustCurve(xs, ys)
+	t.place = func(i int) diag.Span { return s.cell(i+1, second) }
+	return t, true
 }
 
 // sheet reads a CSV file once.
@@ -75,7 +84,9 @@ func (r *reader) sheet(file *value) (*sheet, bool) {
 		return nil, false
 	}
 	s := &sheet{src: &diag.Source{Name: file.text, Text: text}}
-	if !r.readSheet(s, file) {
+	if p, ok := s.read(); !ok {
+		p.See = []diag.Note{{At: r.span(file), Text: "the file is used here"}}
+		r.list.Add(p)
 		return nil, false
 	}
 	r.files[file.text] = s
@@ -93,44 +104,88 @@ func reason(err error) string {
 	}
 }
 
-// readSheet splits the file into its header and rows.
-func (r *reader) readSheet(s *sheet, file *value) bool {
-	see := []diag.Note{{At: r.span(file), Text: "the file is used here"}}
-	c := csv.NewReader(bytes.NewReader(bytes.TrimPrefix(s.src.Text, []byte("\xef\xbb\xbf"))))
+// reader returns a reader of the rows.
+func (s *sheet) reader() *csv.Reader {
+	if bytes.HasPrefix(s.src.Text, []byte("\xef\xbb\xbf")) {
+		s.skip = 3
+	}
+	c := csv.NewReader(bytes.NewReader(s.src.Text[s.skip:]))
 	c.TrimLeadingSpace = true
-	c.ReuseRecord = false
-	for {
-		row, err := c.Read()
-		if errors.Is(err, io.EOF) {
-			break
-		}
-		if err != nil {
-			line := 1
-			var bad *csv.ParseError
-			if errors.As(err, &bad) {
-				line, err = bad.Line, bad.Err
+	c.ReuseRecord = true
+	return c
+}
+
+// read reads header and rows. When it cannot it returns what is wrong.
+func (s *sheet) read() (diag.Problem, bool) {
+	if bytes.IndexByte(s.src.Text, 0) >= 0 {
+		return diag.Problem{At: s.src.Whole(), Text: "the file is no text in UTF-8", Help: "save it as CSV in UTF-8"}, false
+	}
+	c := s.reader()
+	for row := 0; ; row++ {
+		cells, err := c.Read()
+		switch {
+		case errors.Is(err, io.EOF) && s.head == nil:
+			return diag.Problem{At: s.src.Whole(), Text: "the file is empty", Help: `write a header such as "time [s],speed [km/h]"`}, false
+		case errors.Is(err, io.EOF):
+			return diag.Problem{}, true
+		case err != nil:
+			return s.broken(err), false
+		case s.head == nil:
+			if p, ok := s.header(cells); !ok {
+				return p, false
 			}
-			r.list.Add(diag.Problem{At: s.place(line), Text: "this is not a row of the table: " + err.Error(),
-				Help: "every row needs as many fields as the header, separated by commas", See: see})
-			return false
-		}
-		line, _ := c.FieldPos(0)
-		if s.head == nil {
-			s.head = append([]string(nil), row...)
 			continue
 		}
-		s.rows, s.line = append(s.rows, append([]string(nil), row...)), append(s.line, line)
+		for i, cell := range cells {
+			x, err := strconv.ParseFloat(strings.TrimSpace(cell), 64)
+			if s.bad[i] < 0 && (err != nil || x-x != 0) {
+				s.bad[i] = row
+			}
+			s.columns[i] = append(s.columns[i], x)
+		}
 	}
-	if s.head == nil {
-		r.list.Add(diag.Problem{At: s.src.Whole(), Text: "the file is empty", Help: `write a header such as "time [s],speed [km/h]"`, See: see})
-		return false
+}
+
+// header takes in the first row.
+func (s *sheet) header(cells []string) (diag.Problem, bool) {
+	if len(cells) == 1 {
+		for _, mark := range []string{";", "\t"} {
+			if strings.Contains(cells[0], mark) {
+				return diag.Problem{At: s.place(1), Text: "the columns are not separated by commas",
+					Help: "save it with commas between the columns and a point as decimal sign"}, false
+			}
+		}
 	}
-	return true
+	s.head = append([]string(nil), cells...)
+	s.columns = make([][]float64, len(cells))
+	s.bad = make([]int, len(cells))
+	for i := range s.bad {
+		s.bad[i] = -1
+	}
+	return diag.Problem{}, true
+}
+
+// broken words an error of the CSV reader.
+func (s *sheet) broken(err error) diag.Problem {
+	line := 1
+	var bad *csv.ParseError
+	if errors.As(err, &bad) {
+		line, err = bad.Line, bad.Err
+	}
+	p := diag.Problem{At: s.place(line), Text: "this row of the table cannot be read: " + err.Error()}
+	switch {
+	case errors.Is(err, csv.ErrFieldCount):
+		p.Text = fmt.Sprintf("this row does not have as many fields as the header, which has %d", len(s.head))
+		p.Help = "the decimal sign is a point; fields are separated by commas"
+	case errors.Is(err, csv.ErrQuote) || errors.Is(err, csv.ErrBareQuote):
+		p.Text = "a quote in this row has no partner"
+	}
+	return p
 }
 
 // place returns the span of a line of the file, counted from one.
 func (s *sheet) place(line int) diag.Span {
-	start := 0
+	start := s.skip
 	for i := 1; i < line; i++ {
 		next := bytes.IndexByte(s.src.Text[start:], '\n')
 		if next < 0 {
@@ -145,41 +200,76 @@ func (s *sheet) place(line int) diag.Span {
 	return s.src.Span(start, end)
 }
 
-// column reads the column that a key names, or the one at a place when the key is not given.
-func (r *reader) column(s *sheet, o object, key string, at int, want unit.Want) ([]float64, bool) {
-	see := []diag.Note{{At: r.span(o.get("file")), Text: "the file is used here"}}
+// cell returns the place of a cell; row zero is the header. It reads the file again, since places of cells
+// are not kept.
+func (s *sheet) cell(row, column int) diag.Span {
+	c := s.reader()
+	for range row {
+		c.Read()
+	}
+	cells, err := c.Read()
+	if err != nil || column >= len(cells) {
+		return s.place(1)
+	}
+	line, col := c.FieldPos(column)
+	at := s.place(line)
+	start := at.Start + col - 1
+	if start < len(s.src.Text) && s.src.Text[start] == '"' {
+		return s.src.Span(start, min(at.End, start+len(cells[column])+2))
+	}
+	return s.src.Span(start, min(at.End, start+max(1, len(strings.TrimRight(cells[column], " \t\r")))))
+}
+
+// column returns the values of the column that a key names, or of the one at a place when the key is not
+// given, in SI, and where the column stands.
+func (r *reader) column(s *sheet, o object, c column, at int, see []diag.Note) ([]float64, int, bool) {
+	report := func(where diag.Span, text, help string) ([]float64, int, bool) {
+		r.list.Add(diag.Problem{At: where, Text: text, Help: help, See: see})
+		return nil, 0, false
+	}
 	names := make([]string, len(s.head))
 	for i, h := range s.head {
 		names[i], _ = splitHead(h)
 	}
-	if v := o.get(key); v != nil {
-		if at = indexOf(names, v.text); v.kind != '"' || at < 0 {
-			r.list.At(r.span(v), fmt.Sprintf("the file has no column %s", quote(v.text)), r.suggest(v.text, names))
-			return nil, false
+	if v := o.get(c.key); v != nil {
+		name, ok := r.text(v, "a column")
+		if !ok {
+			return nil, 0, false
+		}
+		if at = indexOf(names, name); at < 0 {
+			_, help := r.suggest(name, names)
+			r.list.At(r.span(v), fmt.Sprintf("the file has no column %s", quote(name)), help)
+			return nil, 0, false
 		}
 	}
 	if at >= len(s.head) {
-		r.list.Add(diag.Problem{At: s.place(1), Text: fmt.Sprintf("a column with the %s is missing", want.Name), See: see})
-		return nil, false
+		return report(s.place(1), "a column with "+article(c.want.Name)+" is missing", "")
 	}
 	_, u := splitHead(s.head[at])
-	one, fault := want.Read("1 "+u, nil)
-	zero, fault0 := want.Read("0 "+u, nil)
-	if fault != nil || fault0 != nil {
-		help := fmt.Sprintf("write the unit in brackets after the name: %q", names[at]+" ["+want.Unit+"]")
-		r.list.Add(diag.Problem{At: s.place(1), Text: fmt.Sprintf("the header of column %d gives no unit of %s", at+1, want.Name), Help: help, See: see})
-		return nil, false
+	if u == "" && c.want.Unit != "" {
+		return report(s.cell(0, at), fmt.Sprintf("the header of column %d gives no unit", at+1), fmt.Sprintf("write the unit in brackets after the name: %q", names[at]+" ["+c.want.Unit+"]"))
 	}
-	values := make([]float64, 0, len(s.rows))
-	for i, row := range s.rows {
-		x, err := strconv.ParseFloat(strings.TrimSpace(row[at]), 64)
-		if err != nil || x-x != 0 {
-			r.list.Add(diag.Problem{At: s.place(s.line[i]), Text: fmt.Sprintf("column %d holds %s, which is not a number", at+1, quote(row[at])), See: see})
-			return nil, false
+	scale, fault := c.want.Scale(u)
+	if fault != nil {
+		return report(s.cell(0, at), fmt.Sprintf("the unit of column %d does not fit: %s", at+1, fault.Text), fault.Help)
+	}
+	if row := s.bad[at]; row >= 0 {
+		where := s.cell(row, at)
+		text := string(s.src.Text[where.Start:where.End])
+		return report(where, fmt.Sprintf("%s in column %d is not a number", quote(text), at+1), "write plain numbers, with a point as decimal sign; the unit stands in the header")
+	}
+	values := make([]float64, len(s.columns[at]))
+	for i, x := range s.columns[at] {
+		values[i] = scale.SI(x)
+		fault := bounded(values[i], 0)
+		if fault == nil && c.want.Level && values[i] < 0 {
+			fault = &unit.Fault{Text: "a temperature level lies below absolute zero"}
 		}
-		values = append(values, zero+(one-zero)*x)
+		if fault != nil {
+			return report(s.cell(i+1, at), fault.Text, fault.Help)
+		}
 	}
-	return values, true
+	return values, at, true
 }
 
 func indexOf(list []string, s string) int {

@@ -5,215 +5,213 @@ import (
 	"errors"
 	"fmt"
 	"io"
-	"strings"
 
 	"github.com/goccy/go-json/jsontext"
 
 	"workheat/network/diag"
 )
 
-// Bounds of what is read. They are far above any sensible netlist and keep time and memory in hand.
+// Bounds of what is read. They are far above any sensible netlist and keep time and memory in hand: a tree
+// of maxValues values takes about 400 MB at worst.
 const (
-	maxBytes = 64 << 20 // of a netlist or a trace file
-	maxDepth = 32       // of nested objects and arrays
+	maxBytes  = 64 << 20 // of a netlist or a trace file
+	maxDepth  = 32       // of nested objects and arrays
+	maxValues = 4 << 20  // in a netlist
 )
 
 // A value is one JSON value with its place.
 type value struct {
 	kind       byte // as jsontext.Kind: n f t " 0 { [
-	start, end int
+	start, end int32
 	text       string // of a string, or the literal of a number
-	members    []member
-	items      []value
+	in         *inner
+}
+
+// An inner is what stands inside an object or a list.
+type inner struct {
+	members []member
+	items   []value
 }
 
 // A member is one name and value of an object.
 type member struct {
 	key        string
-	start, end int
+	start, end int32 // of the key, quotes included
+	twice      bool  // the key stood before: reported, and passed over
 	value      value
+}
+
+// members returns what stands in an object; of anything else there are none.
+func (v *value) members() []member {
+	if v.in == nil {
+		return nil
+	}
+	return v.in.members
+}
+
+// items returns what stands in a list; of anything else there are none.
+func (v *value) items() []value {
+	if v.in == nil {
+		return nil
+	}
+	return v.in.items
 }
 
 var kindNames = map[byte]string{
 	'n': "null", 't': "true", 'f': "false", '"': "text", '0': "a number", '{': "an object", '[': "a list",
 }
 
-// parse reads the whole text into a tree. Faults of syntax are reported, and then the tree is not usable.
-func parse(src *diag.Source, list *diag.List) (value, bool) {
+// parse reads the whole text into a tree. Faults of syntax are reported; those whose cure is plain are
+// mended in a copy, so that what follows is read as well. The tree is usable when ok is true. Places where
+// a mend had to guess a value are returned in hush: whatever else is wrong with them follows from that.
+func parse(src *diag.Source, list *diag.List) (root value, hush []diag.Span, ok bool) {
 	if len(src.Text) > maxBytes {
 		list.At(src.Whole(), fmt.Sprintf("the file is too large: %d MiB", len(src.Text)>>20),
 			fmt.Sprintf("keep it below %d MiB", maxBytes>>20))
-		return value{}, false
+		return value{}, nil, false
 	}
-	p := &parser{src: src, list: list}
-	p.dec = jsontext.NewDecoder(bytes.NewBuffer(src.Text), jsontext.AllowDuplicateNames(true))
-	v, err := p.value(0)
-	if err == nil {
-		_, err = p.dec.ReadToken()
-		if errors.Is(err, io.EOF) {
-			return v, true
-		}
+	m := &mender{src: src, list: list, text: src.Text}
+	if !m.encoding() {
+		return value{}, nil, false
+	}
+	for {
+		p := &parser{text: m.text, whole: string(m.text)}
+		p.dec = jsontext.NewDecoder(bytes.NewBuffer(m.text), jsontext.AllowDuplicateNames(true))
+		v, err := p.file()
 		if err == nil {
-			at := int(p.dec.InputOffset())
-			list.At(src.Span(at-1, at), "there is more text after the end of the netlist", "remove it, or join it to the object before")
-			return value{}, false
+			return v, m.hush, true
+		}
+		if !m.mend(p, err) {
+			return value{}, nil, false
 		}
 	}
-	if !errors.Is(err, errDepth) {
-		p.syntax(err)
-	}
-	return value{}, false
 }
 
 type parser struct {
-	src  *diag.Source
-	list *diag.List
-	dec  *jsontext.Decoder
+	dec       *jsontext.Decoder
+	text      []byte
+	whole     string  // the same text: values share its bytes
+	open      []int32 // places of the brackets that are open
+	count     int     // values read
+	lastStart int32   // of the last value or key read
+	lastKind  byte
 }
 
-var errDepth = errors.New("too deep")
+var (
+	errDepth = errors.New("too deep")
+	errMany  = errors.New("too many")
+	errMore  = errors.New("text after the end")
+)
+
+// file reads one value and the end of the text.
+func (p *parser) file() (value, error) {
+	v, err := p.value(0)
+	if err != nil {
+		return v, err
+	}
+	if p.dec.PeekKind(); p.next() < len(p.text) {
+		return v, errMore
+	}
+	if _, err = p.dec.ReadToken(); !errors.Is(err, io.EOF) {
+		return v, errMore
+	}
+	return v, nil
+}
+
+// next returns where the next token begins.
+func (p *parser) next() int {
+	for i := int(p.dec.InputOffset()); i < len(p.text); i++ {
+		switch p.text[i] {
+		case ' ', '\t', '\r', '\n', ',', ':':
+		default:
+			return i
+		}
+	}
+	return len(p.text)
+}
+
+// token reads the next token and returns its kind, text and place. The text of a string is decoded.
+func (p *parser) token() (kind byte, text string, start, end int32, err error) {
+	p.dec.PeekKind() // moves past white space, commas and colons, and reports what is wrong with them
+	from := p.next()
+	t, err := p.dec.ReadToken()
+	if err != nil {
+		return 0, "", 0, 0, err
+	}
+	to := int(p.dec.InputOffset())
+	p.lastStart, p.lastKind = int32(from), byte(t.Kind())
+	switch kind = byte(t.Kind()); {
+	case kind != '"':
+		text = p.whole[from:to]
+	case bytes.IndexByte(p.text[from:to], '\\') < 0:
+		text = p.whole[from+1 : to-1]
+	default:
+		text = t.String()
+	}
+	return kind, text, int32(from), int32(to), nil
+}
 
 // value reads the next value.
 func (p *parser) value(depth int) (value, error) {
 	if depth > maxDepth {
-		at := int(p.dec.InputOffset())
-		p.list.At(p.src.Span(at, at+1), fmt.Sprintf("the nesting is deeper than %d levels", maxDepth), "flatten it")
 		return value{}, errDepth
 	}
-	p.dec.PeekKind() // moves past white space, commas and colons
-	token, err := p.dec.ReadToken()
-	if err != nil {
-		return value{}, err
+	if p.count++; p.count > maxValues {
+		return value{}, errMany
 	}
-	v := value{kind: byte(token.Kind()), end: int(p.dec.InputOffset())}
+	var v value
+	var err error
+	if v.kind, v.text, v.start, v.end, err = p.token(); err != nil {
+		return v, err
+	}
 	switch v.kind {
 	case '{':
-		v.start = v.end - 1
 		err = p.members(&v, depth)
 	case '[':
-		v.start = v.end - 1
-		for p.dec.PeekKind() != ']' {
-			item, err := p.value(depth + 1)
-			if err != nil {
-				return v, err
-			}
-			v.items = append(v.items, item)
-		}
-		_, err = p.dec.ReadToken()
-	case '"':
-		v.text = token.String()
-		v.start = p.back(v.end)
-	default:
-		v.text = token.String()
-		v.start = v.end - len(v.text)
+		err = p.items(&v, depth)
 	}
-	v.end = int(p.dec.InputOffset())
 	return v, err
+}
+
+// items reads a list up to its closing bracket.
+func (p *parser) items(v *value, depth int) error {
+	p.open = append(p.open, v.start)
+	v.in = &inner{}
+	for p.dec.PeekKind() != ']' {
+		item, err := p.value(depth + 1)
+		if err != nil {
+			return err
+		}
+		v.in.items = append(v.in.items, item)
+	}
+	return p.close(v)
 }
 
 // members reads an object up to its closing brace.
 func (p *parser) members(v *value, depth int) error {
+	p.open = append(p.open, v.start)
+	v.in = &inner{}
 	for p.dec.PeekKind() != '}' {
-		token, err := p.dec.ReadToken()
-		if err != nil {
+		var m member
+		var err error
+		if _, m.key, m.start, m.end, err = p.token(); err != nil {
 			return err
 		}
-		m := member{key: token.String(), end: int(p.dec.InputOffset())}
-		m.start = p.back(m.end)
 		if m.value, err = p.value(depth + 1); err != nil {
 			return err
 		}
-		v.members = append(v.members, m)
+		v.in.members = append(v.in.members, m)
 	}
-	_, err := p.dec.ReadToken()
-	return err
+	return p.close(v)
 }
 
-// back returns where the string that ends before end begins: its opening quote.
-func (p *parser) back(end int) int {
-	text := p.src.Text
-	for i := end - 2; i >= 0; i-- {
-		if text[i] != '"' {
-			continue
-		}
-		slashes := 0
-		for j := i - 1; j >= 0 && text[j] == '\\'; j-- {
-			slashes++
-		}
-		if slashes%2 == 0 {
-			return i
-		}
+// close reads the closing bracket of v.
+func (p *parser) close(v *value) error {
+	if _, err := p.dec.ReadToken(); err != nil {
+		return err
 	}
-	return 0
-}
-
-// syntax reports an error of the decoder.
-func (p *parser) syntax(err error) {
-	var bad *jsontext.SyntacticError
-	at, text := int(p.dec.InputOffset()), err.Error()
-	if errors.As(err, &bad) {
-		at = int(bad.ByteOffset)
-		text = bad.Err.Error()
-	}
-	help := "check commas, quotes and brackets near here"
-	switch {
-	case len(bytes.TrimSpace(p.src.Text)) == 0:
-		p.list.At(p.src.Whole(), "the file is empty", `begin with { "workheat": 1, "nodes": { ... } }`)
-		return
-	case errors.Is(err, io.ErrUnexpectedEOF) || errors.Is(err, io.EOF) || strings.Contains(text, "EOF"):
-		at, text = len(p.src.Text), "the text ends before the netlist is complete"
-		help = "a closing bracket or quote is missing"
-	case at < len(p.src.Text) && (p.src.Text[at] == '}' || p.src.Text[at] == ']'):
-		help = "a comma before a closing bracket, or a value missing after a comma or colon?"
-	case at+1 < len(p.src.Text) && p.src.Text[at] == '/':
-		help = `JSON has no comments: use an "about" key`
-	}
-	p.list.At(p.src.Span(at, min(at+1, len(p.src.Text))), "this is not JSON: "+clean(text), help)
-}
-
-// clean takes the library's own prefix off a message.
-func clean(text string) string {
-	text = strings.TrimPrefix(text, "jsontext: ")
-	if i := strings.Index(text, " (expecting"); i > 0 {
-		text = text[:i]
-	}
-	return text
-}
-
-// span returns the place of a value.
-func (r *reader) span(v *value) diag.Span { return r.src.Span(v.start, v.end) }
-
-// inside returns the place of the bytes [start, end) of a string value's text, in the source: escapes in
-// the source make the two differ.
-func (r *reader) inside(v *value, start, end int) diag.Span {
-	if v.kind != '"' {
-		return r.span(v)
-	}
-	raw := r.src.Text[v.start+1 : max(v.start+1, v.end-1)]
-	if !bytes.ContainsRune(raw, '\\') {
-		return r.src.Span(v.start+1+start, v.start+1+end)
-	}
-	return r.src.Span(v.start+1+rawOffset(raw, start), v.start+1+rawOffset(raw, end))
-}
-
-// rawOffset returns where in the raw text of a JSON string the decoded text's byte n comes from.
-func rawOffset(raw []byte, n int) int {
-	i := 0
-	for decoded := 0; i < len(raw) && decoded < n; {
-		if raw[i] != '\\' {
-			i++
-			decoded++
-			continue
-		}
-		if i+1 < len(raw) && raw[i+1] == 'u' {
-			var code rune
-			fmt.Sscanf(string(raw[min(i+2, len(raw)):min(i+6, len(raw))]), "%x", &code)
-			i += 6
-			decoded += len(string(code))
-			continue
-		}
-		i += 2
-		decoded++
-	}
-	return min(i, len(raw))
+	p.open = p.open[:len(p.open)-1]
+	v.text, v.end = "", int32(p.dec.InputOffset())
+	p.lastStart, p.lastKind = v.start, v.kind
+	return nil
 }

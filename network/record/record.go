@@ -14,6 +14,7 @@ type Node struct {
 	Name   string
 	State  int             // its column in the tape, or -1 when it is held
 	Limits []element.Limit // in the order of the netlist
+	Start  float64         // K, all that is known of a run without steps
 
 	// Temperature turns a state value into a temperature [K], Value the other way; both are rising.
 	// They are nil when the node is held.

@@ -36,6 +36,10 @@ func Summarise(t *Tape, n Node) Summary {
 		return summariseHeld(t, n)
 	}
 	if t.Steps() == 0 {
+		s.Start, s.Highest, s.End = n.Start, n.Start, n.Start
+		for _, l := range n.Limits {
+			s.Limits = append(s.Limits, Margin{Limit: l, Margin: l.Temperature - n.Start, First: math.NaN()})
+		}
 		return s
 	}
 	_, _, _, first := t.Step(0)
@@ -57,6 +61,7 @@ func Summarise(t *Tape, n Node) Summary {
 	}
 	for k := 0; k < t.Steps(); k++ {
 		start, h, _, coef := t.Step(k)
+		see(start, coef[n.State]) // a node without mass may have jumped there
 		t.eachTurn(coef, n.State, func(theta float64) { see(start+theta*h, t.Value(coef, n.State, theta)) })
 		see(start+h, t.Value(coef, n.State, 1))
 	}
@@ -86,9 +91,46 @@ func summariseHeld(t *Tape, n Node) Summary {
 		s.Highest, s.When = s.End, end
 	}
 	for _, l := range n.Limits {
-		s.Limits = append(s.Limits, Margin{Limit: l, Margin: l.Temperature - s.Highest, First: math.NaN()})
+		m := Margin{Limit: l, Margin: l.Temperature - s.Highest, First: math.NaN()}
+		if m.Margin < 0 {
+			m.aboveGiven(n, end)
+		}
+		s.Limits = append(s.Limits, m)
 	}
 	return s
+}
+
+// aboveGiven reads how long a held node is above the limit, piece by piece of its table.
+func (m *Margin) aboveGiven(n Node, end float64) {
+	corners := append([]float64{0}, n.Given.X...)
+	for i, from := range corners {
+		to := end
+		if i < len(n.Given.X) {
+			to = n.Given.X[i]
+		}
+		from, to = math.Max(from, 0), math.Min(to, end)
+		if !(from < to) {
+			continue
+		}
+		mid := 0.5 * (from + to) // away from jumps
+		slope := n.Given.Slope(mid)
+		a, b := from, to
+		over := n.Given.At(mid) - m.Temperature
+		switch cross := mid - over/slope; {
+		case slope > 0:
+			a = math.Max(a, cross)
+		case slope < 0:
+			b = math.Min(b, cross)
+		case !(over > 0):
+			continue
+		}
+		if a < b {
+			m.Above += b - a
+			if math.IsNaN(m.First) {
+				m.First = a
+			}
+		}
+	}
 }
 
 // eachTurn calls visit at every θ inside the step at which state i turns round, in order.
@@ -105,7 +147,10 @@ func (t *Tape) eachTurn(coef []float64, i int, visit func(theta float64)) {
 	for j := 1; j <= looks; j++ {
 		b := float64(j) / looks
 		fb := t.Slope(coef, i, b)
-		if fa != 0 && fa*fb < 0 {
+		switch {
+		case fb == 0: // at the look itself, or flat throughout
+			visit(b)
+		case fa*fb < 0:
 			visit(bisect(a, b, func(x float64) bool { return t.Slope(coef, i, x)*fa > 0 }))
 		}
 		a, fa = b, fb

@@ -119,7 +119,7 @@ var hints = map[string]string{
 	"kph": "write km/h", "kmh": "write km/h", "kmph": "write km/h",
 	"sec": "write s", "hr": "write h", "hrs": "write h", "hour": "write h", "hours": "write h",
 	"day": "write d", "days": "write d", "minute": "write min", "minutes": "write min",
-	"second": "write s", "seconds": "write s", "meter": "write m", "metre": "write m",
+	"mins": "write min", "secs": "write s", "second": "write s", "seconds": "write s", "meter": "write m", "metre": "write m",
 	"inch": "write in", "inches": "write in", "feet": "write ft", "foot": "write ft",
 	"lbs": "write lb", "ton": "write t for 1000 kg", "tonne": "write t", "gr": "write g",
 	"cc": "write cm^3", "sqm": "write m^2", "degree": "write deg", "degrees": "write deg",

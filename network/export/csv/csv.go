@@ -116,8 +116,9 @@ func number(buf []byte, v float64) []byte {
 // pow10 holds the powers of ten that are exact.
 var pow10 = [...]float64{1, 1e1, 1e2, 1e3, 1e4, 1e5, 1e6, 1e7, 1e8, 1e9, 1e10, 1e11, 1e12, 1e13}
 
-// plain appends a value of ordinary size with nine significant digits, trailing zeros left out. It is some
-// times faster than strconv, and the rounding of the ninth digit is within one part in 1e6 of a tie.
+// plain appends a value of ordinary size with nine significant digits, trailing zeros left out. It works in
+// one multiplication and integers, which is faster than strconv; the product carries round-off of about 1e-7
+// of the ninth digit, so only a value that close to a tie may be rounded the other way.
 func plain(buf []byte, v, size float64) []byte {
 	whole := 0 // digits before the point, negative: zeros after it
 	for whole < digits && size >= pow10[whole] {

@@ -4,7 +4,6 @@ import (
 	"image/color"
 	"strings"
 
-	xfont "golang.org/x/image/font"
 	gplot "gonum.org/v1/plot"
 	"gonum.org/v1/plot/font"
 	"gonum.org/v1/plot/text"
@@ -57,8 +56,11 @@ func write(size vg.Length, c color.Color, x text.XAlignment, y text.YAlignment) 
 	}
 }
 
+// boldWeight is bold on the scale of the font library, where zero is normal.
+const boldWeight = 3
+
 func bold(s text.Style) text.Style {
-	s.Font.Weight = xfont.WeightBold
+	s.Font.Weight = boldWeight
 	return s
 }
 

@@ -12,7 +12,7 @@ const accountColumns = 8
 
 // account writes the energy book, one section for each of its lists.
 func (b *book) account() error {
-	widths := []float64{34, 18, 18, 18, 18, 16, 16, 80}
+	widths := []float64{34, 18, 18, 18, 18, 16, 16, 100}
 	out := b.open(energySheet, 3+len(b.Doubts()), widths, nil)
 	out.line("Energy book", styleTitle, accountColumns, lineChars)
 	out.notices(accountColumns, lineChars)
@@ -116,8 +116,11 @@ func (l *ledger) checks() {
 		if !c.Passed {
 			verdict = l.text("FAILED", styleAlarm)
 		}
-		const chars = 75 // of the last column
-		height := 14.5 * float64(1+len([]rune(c.About))/chars)
+		const chars = 95 // of the last column
+		height := 0.0
+		if lines := 1 + len([]rune(c.About))/chars; lines > 1 {
+			height = 14.5 * float64(lines)
+		}
 		l.addHigh(height, l.plain(c.Name), l.number(float64(c.Layer), formatCount), l.gap(c.Gap), l.gap(c.Allowed),
 			l.after(c.Unit), verdict, l.plain(c.Where), l.text(c.About, styleWrapped))
 	}

@@ -47,6 +47,7 @@ func Write(w io.Writer, o *outcome.Run) error {
 	}
 	b := &book{Run: o, file: excelize.NewFile(), styles: map[string]int{}}
 	b.drawn = b.drawing()
+	b.file.SetZipWriter(newArchive)
 	defer b.file.Close()
 	if err := b.file.SetSheetName("Sheet1", summarySheet); err != nil {
 		return err

@@ -83,7 +83,7 @@ func Peak(n, i int, end float64) (highest, when float64) {
 func limits(i int) []element.Limit {
 	switch i {
 	case 0:
-		return []element.Limit{{Name: "fade", Temperature: 273.15 + 350}}
+		return []element.Limit{{Name: "fade", Temperature: 273.15 + 250}}
 	case 1:
 		return []element.Limit{{Name: "vapour lock", Temperature: 273.15 + 400}, {Name: "paint", Temperature: 273.15 + 5000}}
 	}
