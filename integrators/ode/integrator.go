@@ -25,7 +25,8 @@ type Integrator struct {
 
 	before, after []float64 // event values
 	dense, point  []float64
-	change, old   []float64 // of Newton's method for the algebraic states
+	polynomial    func(dst []float64) // the stepper's Dense, bound once
+	change, old   []float64           // of Newton's method for the algebraic states
 }
 
 // New binds a method to a problem. A tolerance that is not positive panics.
@@ -39,6 +40,7 @@ func New(p *Problem, m Method, tol Tolerance) *Integrator {
 		quad: make([]float64, p.NQ), comp: make([]float64, p.NQ),
 		dense: make([]float64, (m.Degree()+1)*p.N), point: make([]float64, p.N),
 	}
+	g.polynomial = g.stepper.Dense
 	for i := range g.y {
 		if p.Algebraic(i) {
 			g.algebraic = append(g.algebraic, i)
@@ -202,7 +204,7 @@ func (g *Integrator) acceptStep(observe Observer) bool {
 	}
 	s := g.stepper.Step()
 	if observe != nil {
-		observe(s, g.stepper.Dense)
+		observe(s, g.polynomial)
 	}
 	g.remember(s)
 	copy(g.y, s.Y1)

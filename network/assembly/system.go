@@ -159,10 +159,12 @@ func (s *System) Recount(path int, state *element.State) float64 {
 
 // Ranges asks every batch that has a valid range whether the state is outside it.
 func (s *System) Ranges(state *element.State, report func(path int, text string)) {
+	first := 0
+	local := func(path int, text string) { report(first+path, text) }
 	for i := range s.batches {
-		b := &s.batches[i]
-		if r, ok := b.Batch.(element.Ranger); ok {
-			r.Range(state, func(local int, text string) { report(b.first+local, text) })
+		if r, ok := s.batches[i].Batch.(element.Ranger); ok {
+			first = s.batches[i].first
+			r.Range(state, local)
 		}
 	}
 }
