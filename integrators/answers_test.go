@@ -3,7 +3,6 @@ package integrators_test
 import (
 	"context"
 	"flag"
-	"fmt"
 	"math"
 	"testing"
 
@@ -101,7 +100,7 @@ func checkAnswers(t *testing.T, c *problems.Case, m ode.Method, rtol float64) {
 	if err != nil {
 		t.Fatalf("rtol %.0e: %v", rtol, err)
 	}
-	t.Log(fmt.Sprintf("rtol %.0e: %.2f digits, %d steps, %d rejected", rtol, worst, stats.Steps, stats.Rejected))
+	t.Logf("rtol %.0e: %.2f digits, %d steps, %d rejected", rtol, worst, stats.Steps, stats.Rejected)
 	if bound := stepBound(c, rtol); stats.Steps+stats.Rejected > bound {
 		t.Errorf("rtol %.0e: %d steps and %d rejected, want at most %d", rtol, stats.Steps, stats.Rejected, bound)
 	}

@@ -240,9 +240,7 @@ func (r *runner) summarise() {
 
 // rangeWarnings looks, at the end of every step, for laws used outside their range, and for materials.
 func (r *runner) rangeWarnings() {
-	if r.model.system.HasRanges() {
-		r.lawWarnings()
-	}
+	r.lawWarnings()
 	for j, i := range r.model.Net.Order {
 		r.materialWarning(i, r.result.Summary[j])
 	}
@@ -264,6 +262,10 @@ func (r *runner) lawWarnings() {
 			r.warn("%s: %s, first at %.4g s", sys.Paths[path].Element, text, at)
 		}
 	}
+	watch := sys.Watch(report)
+	if watch == nil {
+		return
+	}
 	for k := 0; k < tape.Steps(); k++ {
 		start, h, segment, coef := tape.Step(k)
 		for i := range y {
@@ -274,7 +276,7 @@ func (r *runner) lawWarnings() {
 			entered = segment
 		}
 		at = start + h
-		sys.Ranges(sys.State(at, y, nil), report)
+		watch(sys.State(at, y, nil))
 	}
 }
 

@@ -157,26 +157,25 @@ func (s *System) Recount(path int, state *element.State) float64 {
 	return s.batches[p.Group].Recount(p.Local, state)
 }
 
-// Ranges asks every batch that has a valid range whether the state is outside it.
-func (s *System) Ranges(state *element.State, report func(path int, text string)) {
-	first := 0
-	local := func(path int, text string) { report(first+path, text) }
+// Watch returns a function that asks every batch with a valid range whether a state is outside it, and
+// reports the paths that are; nil if no batch has a range.
+func (s *System) Watch(report func(path int, text string)) func(*element.State) {
+	var watches []func(*element.State)
 	for i := range s.batches {
-		if r, ok := s.batches[i].Batch.(element.Ranger); ok {
-			first = s.batches[i].first
-			r.Range(state, local)
+		b := &s.batches[i]
+		if r, ok := b.Batch.(element.Ranger); ok {
+			local := func(path int, text string) { report(b.first+path, text) }
+			watches = append(watches, func(state *element.State) { r.Range(state, local) })
 		}
 	}
-}
-
-// HasRanges reports whether any batch has a valid range.
-func (s *System) HasRanges() bool {
-	for i := range s.batches {
-		if _, ok := s.batches[i].Batch.(element.Ranger); ok {
-			return true
+	if watches == nil {
+		return nil
+	}
+	return func(state *element.State) {
+		for _, watch := range watches {
+			watch(state)
 		}
 	}
-	return false
 }
 
 // PathSlopes returns, at time t and a state vector, the slopes of each path by its Deps and by time alone

@@ -49,8 +49,8 @@ type Opener func(name string) ([]byte, error)
 
 // Defaults of the tolerance.
 const (
-	DefaultRel = 1e-6
-	DefaultAbs = 1e-6 // K
+	DefaultRel = 1e-5
+	DefaultAbs = 1e-5 // K
 )
 
 // Bounds of the report. A file with more than maxFound problems is not read to its end.

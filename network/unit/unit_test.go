@@ -18,7 +18,6 @@ var testParams = Params{
 }
 
 var (
-	dimPower   = Dim{2, 1, -3}
 	dimSpecial = Dim{2, 0, -2, -1}
 	dimHTC     = Dim{0, 1, -3, -1}
 )
