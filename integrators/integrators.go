@@ -5,8 +5,6 @@
 package integrators
 
 import (
-	"strings"
-
 	"workheat/integrators/ode"
 	"workheat/integrators/rosenbrock"
 )
@@ -18,22 +16,3 @@ var Methods = []ode.Method{
 
 // Default is the method for those who do not choose.
 var Default = Methods[0]
-
-// Find returns the method of that name, in whatever case, and whether there is one.
-func Find(name string) (ode.Method, bool) {
-	for _, m := range Methods {
-		if strings.EqualFold(m.Name(), name) {
-			return m, true
-		}
-	}
-	return nil, false
-}
-
-// Names returns the names of all methods, in the order of the list.
-func Names() []string {
-	names := make([]string, len(Methods))
-	for i, m := range Methods {
-		names[i] = m.Name()
-	}
-	return names
-}

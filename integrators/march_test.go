@@ -29,6 +29,15 @@ func march(t *testing.T, m ode.Method, p *ode.Problem, y0 []float64, end float64
 	return append([]float64(nil), st.Step().Y0...), q
 }
 
+// eval returns the dense polynomial of state i at θ.
+func eval(coef []float64, n, i int, theta float64) float64 {
+	v := 0.0
+	for k := len(coef)/n - 1; k >= 0; k-- {
+		v = v*theta + coef[k*n+i]
+	}
+	return v
+}
+
 // apart returns the largest difference of two states.
 func apart(a, b []float64) float64 {
 	worst := 0.0

@@ -2,7 +2,6 @@ package integrators_test
 
 import (
 	"math"
-	"strings"
 	"testing"
 
 	"workheat/integrators"
@@ -139,7 +138,7 @@ func denseErrors(t *testing.T, m ode.Method, c *problems.Case, h float64) []floa
 	for _, theta := range []float64{0.15, 0.4, 0.65, 0.9} {
 		want, _ := march(t, m, p, c.Start, theta*h, 64)
 		for i, w := range want {
-			worst[i] = math.Max(worst[i], math.Abs(ode.Eval(coef, p.N, i, theta)-w))
+			worst[i] = math.Max(worst[i], math.Abs(eval(coef, p.N, i, theta)-w))
 		}
 	}
 	return worst
@@ -157,25 +156,10 @@ func TestDenseEnds(t *testing.T) {
 		st.Dense(coef)
 		for i := range p.N {
 			for theta, want := range []float64{st.Step().Y0[i], st.Step().Y1[i]} {
-				if got := ode.Eval(coef, p.N, i, float64(theta)); math.Abs(got-want) > 1e-14 {
+				if got := eval(coef, p.N, i, float64(theta)); math.Abs(got-want) > 1e-14 {
 					t.Errorf("%s: y%d(%d) is %.17g, want %.17g", m.Name(), i+1, theta, got, want)
 				}
 			}
 		}
-	}
-}
-
-// TestFind looks methods up.
-func TestFind(t *testing.T) {
-	for _, name := range integrators.Names() {
-		if m, ok := integrators.Find(strings.ToUpper(name)); !ok || m.Name() != name {
-			t.Errorf("Find(%q) does not find it", name)
-		}
-	}
-	if m, ok := integrators.Find(integrators.Default.Name()); !ok || m != integrators.Default {
-		t.Error("Find does not find the default")
-	}
-	if _, ok := integrators.Find("guess"); ok {
-		t.Error("Find finds what is not there")
 	}
 }

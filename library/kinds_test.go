@@ -3,6 +3,7 @@ package library_test
 import (
 	"math"
 	"math/rand/v2"
+	"slices"
 	"strings"
 	"testing"
 
@@ -293,14 +294,13 @@ func TestDissipatorsGiveAllTheirWork(t *testing.T) {
 
 func TestKindsAreDocumented(t *testing.T) {
 	seen := map[string]bool{}
-	sections := map[element.Section]bool{element.Conductances: true, element.Sources: true, element.Bodies: true, element.Dissipators: true}
 	for _, k := range library.Catalogue().Kinds {
 		id := string(k.Section) + "/" + k.Name
 		if seen[id] {
 			t.Errorf("%s stands twice in the catalogue", id)
 		}
 		seen[id] = true
-		if !sections[k.Section] || k.Name == "" || !strings.HasSuffix(k.About, ".") || k.Formula == "" || k.Source == "" {
+		if !slices.Contains(element.Sections, k.Section) || k.Name == "" || !strings.HasSuffix(k.About, ".") || k.Formula == "" || k.Source == "" {
 			t.Errorf("%s: a part of its description is missing", id)
 		}
 		if body := k.Section == element.Bodies; body != (k.Batch == nil) || body != (k.Vehicle != nil) {

@@ -14,10 +14,10 @@ type Description struct {
 	Paths    []PathInfo
 	Phases   []PhaseInfo
 	States   int
-	Entries  int // of the sparse matrix
-	Slowest  float64
-	Fastest  float64 // time constants [s]
-	HasModes bool
+	Entries  int     // of the sparse matrix
+	Slowest  float64 // s, time constant; infinite when a part of the network can lose heat to nowhere
+	Fastest  float64 // s
+	HasModes bool    // the two were found: the network is not too large, and something in it stores heat
 }
 
 // A NodeInfo is one node in the order of the netlist.
@@ -32,7 +32,8 @@ type NodeInfo struct {
 
 // A PathInfo is one path at the start of the duty.
 type PathInfo struct {
-	Name, Kind, From, To string
+	Name, Kind, From, To string  // From or To is empty for the world outside
+	Work                 bool    // it is a dissipator's: work turned into heat
 	Conductance          float64 // W/K, slope by the temperature of From; zero for sources
 	Flow                 float64 // W
 }
@@ -40,7 +41,8 @@ type PathInfo struct {
 // A PhaseInfo is one phase of the duty with its repeats unrolled once.
 type PhaseInfo struct {
 	Label string
-	Count int // of a repeat
+	Depth int    // how many repeats it stands in
+	Words string // what it does
 }
 
 // Describe resolves the network at the state and drive at which its duty begins.
@@ -61,6 +63,15 @@ func (m *Model) Describe() *Description {
 	m.settle(y)
 	temps := append([]float64(nil), m.system.State(0, y, q).T...)
 	dep, _ := m.system.PathSlopes(0, y)
+	m.nodes(d, temps)
+	m.paths(d, q, dep)
+	m.modes(d, temps, y)
+	m.phases(d, m.Net.Duty.Phases, 0)
+	return d
+}
+
+// nodes describes the nodes at the given temperatures.
+func (m *Model) nodes(d *Description, temps []float64) {
 	for _, i := range m.Net.Order {
 		n := m.Net.Nodes[i]
 		info := NodeInfo{Name: n.Name, Form: n.Form, Start: temps[i], Limits: m.Net.Limits[i]}
@@ -72,12 +83,17 @@ func (m *Model) Describe() *Description {
 		}
 		d.Nodes = append(d.Nodes, info)
 	}
+}
+
+// paths describes the paths, meters aside, with the given flows and slopes.
+func (m *Model) paths(d *Description, q []float64, dep [][]float64) {
 	for i := range m.system.Paths {
 		p := &m.system.Paths[i]
 		if meter(p.Path) {
 			continue
 		}
-		info := PathInfo{Name: m.pathName(p), Kind: m.system.Groups[p.Group].Kind.Name, Flow: q[i]}
+		kind := m.system.Groups[p.Group].Kind
+		info := PathInfo{Name: m.pathName(p), Kind: kind.Name, Work: kind.Section == element.Dissipators, Flow: q[i]}
 		if p.A != element.Outside {
 			info.From = m.Net.Nodes[p.A].Name
 		}
@@ -89,9 +105,6 @@ func (m *Model) Describe() *Description {
 		}
 		d.Paths = append(d.Paths, info)
 	}
-	m.modes(d, temps, y)
-	m.phases(d, m.Net.Duty.Phases)
-	return d
 }
 
 // settle sets the temperatures of the nodes without mass to what their balances say at the start. Where they
@@ -124,11 +137,12 @@ func (m *Model) modes(d *Description, temps, y []float64) {
 	})
 }
 
-func (m *Model) phases(d *Description, list []duty.Phase) {
+func (m *Model) phases(d *Description, list []duty.Phase, depth int) {
+	name := func(i int) string { return m.Net.Nodes[i].Name }
 	for i := range list {
-		d.Phases = append(d.Phases, PhaseInfo{Label: list[i].Label, Count: list[i].Count})
+		d.Phases = append(d.Phases, PhaseInfo{Label: list[i].Label, Depth: depth, Words: list[i].Words(name)})
 		if list[i].Verb == duty.Repeat {
-			m.phases(d, list[i].Phases)
+			m.phases(d, list[i].Phases, depth+1)
 		}
 	}
 }

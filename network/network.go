@@ -42,28 +42,36 @@ func Load(src *diag.Source, cat *element.Catalogue, open netlist.Opener) (*Model
 	return m, problems
 }
 
+// The relative tolerances that can be used.
+const (
+	LeastRel = netlist.LeastRel
+	MostRel  = netlist.MostRel
+)
+
 // Options says how to run.
 type Options struct {
-	Rel, Abs float64 // tolerance; zero: what the netlist says
-	// Audit leaves out the second layer of the energy book when it is false; the ledger is always kept.
+	// Rel and Abs [K] are the tolerance; zero: what the netlist says. A Rel without an Abs is both.
+	Rel, Abs float64
+	// Audit makes the energy book, layers 1 and 2.
 	Audit bool
-	// Tolerance runs a second time at a tenth of the tolerance for the third layer.
+	// Tolerance adds layer 3 to the book: a second run at a tenth of the tolerance. It needs Audit.
 	Tolerance bool
-	// Progress, if not nil, is told the time reached and the share of the phases done, after each leg.
+	// Progress, if not nil, is told the time reached [s] and the label of the leg, after each leg.
 	Progress func(t float64, label string)
 }
 
-// A Result is what came of a run.
+// A Result is what came of a run. Series and the functions of Nodes work on the model: they must not be called
+// while it runs again.
 type Result struct {
 	Model       *Model
 	Method      string
-	Rel, Abs    float64
-	End         float64 // s, where the run ended
-	Nodes       []record.Node
+	Rel, Abs    float64       // tolerance: relative, and in K
+	End         float64       // s, where the run ended
+	Nodes       []record.Node // by node index; Model.Net.Order is that of the netlist
 	Segments    []record.Segment
 	Tape        *record.Tape
 	Summary     []record.Summary // in the order of the netlist
-	Book        *energy.Book
+	Book        *energy.Book     // nil without Options.Audit, or when no step was taken
 	Stats       ode.Stats
 	Warnings    []string
 	Interrupted bool

@@ -26,8 +26,9 @@ type runner struct {
 	legs    []energy.Leg
 	account duty.Account
 	observe ode.Observer
+	jumpers []jumper // nodes whose heat capacity jumps
 
-	// What tests may break on purpose; nil in every real run.
+	// What tests may break on purpose; false in every real run.
 	dropEvents bool
 	dropBreaks bool
 }
@@ -65,6 +66,7 @@ func newRunner(m *Model, opt Options, wrap func(ode.System) ode.System) *runner 
 		dense(r.result.Tape.Add(s.T, s.H, len(r.result.Segments)-1))
 	}
 	m.system.Start(r.y)
+	r.jumpers = m.jumpers()
 	return r
 }
 
@@ -129,8 +131,14 @@ func (r *runner) leg(ctx context.Context, leg *duty.Leg) (end float64, done bool
 		}
 	}
 	r.legs = append(r.legs, record)
-	if u := leg.Until; u != nil && reason == ode.Reached {
-		r.warn("%s: the longest time passed before %s came to %s", leg.Label, r.model.Net.Nodes[u.Node].Name, unit.Temperature.Format(u.Temperature, 4))
+	if u := leg.Until; u != nil {
+		name, mark := r.model.Net.Nodes[u.Node].Name, unit.Temperature.Format(u.Temperature, 4)
+		switch {
+		case reason == ode.Reached && leg.Longest:
+			r.warn("%s: the longest time passed before %s came to %s", leg.Label, name, mark)
+		case reason == ode.Passed && r.t == leg.Start:
+			r.warn("%s took no time: %s had passed %s before it began", leg.Label, name, mark)
+		}
 	}
 	return r.t, reason == ode.Reached || reason == ode.Passed
 }
@@ -204,7 +212,7 @@ func (r *runner) segment(ctx context.Context, leg *duty.Leg, m *duty.Motion, end
 		return ode.Failed
 	}
 	drive := r.model.signals.Fingerprint(start)
-	stop := r.integ.Run(ctx, end, r.first[drive], events, r.observe)
+	stop := r.advance(ctx, end, r.first[drive], events)
 	r.t = stop.T
 	copy(r.y, r.integ.State())
 	res.Segments[len(res.Segments)-1].End = r.t

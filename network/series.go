@@ -8,9 +8,8 @@ import (
 	"workheat/network/unit"
 )
 
-// Series samples the run at uniform times and at its end: temperatures of all nodes in the order of the
+// Series samples the run every interval [s], which must be positive, and at its end: temperatures of all nodes in the order of the
 // netlist, then speed and braking power if something moves, then the heat flow of every path.
-// interval must be positive.
 func (res *Result) Series(interval float64) *record.Series {
 	s := &record.Series{Segments: res.Segments}
 	n := int(math.Floor(res.End/interval*(1+1e-12))) + 1
@@ -29,7 +28,7 @@ func (res *Result) Series(interval float64) *record.Series {
 		column(res.Nodes[i].Name, record.Temperatures, unit.Temperature).Limits = res.Nodes[i].Limits
 	}
 	if body := res.Model.Net.Body; body != "" {
-		column("speed of "+body, record.Vehicle, speedWant)
+		column("speed of "+body, record.Vehicle, unit.RoadSpeed)
 		column("braking power of "+body, record.Vehicle, unit.Power)
 	}
 	flows := len(s.Columns)
@@ -42,8 +41,6 @@ func (res *Result) Series(interval float64) *record.Series {
 	res.fill(s, flows)
 	return s
 }
-
-var speedWant = unit.NewWant("speed", "km/h")
 
 // fill evaluates every sample.
 func (res *Result) fill(s *record.Series, firstFlow int) {

@@ -4,6 +4,7 @@ import (
 	"fmt"
 	"io"
 	"math"
+	"strings"
 
 	"workheat/network/energy"
 )
@@ -16,8 +17,8 @@ func printBook(w io.Writer, b *energy.Book, whole bool) {
 	if v := b.Vehicle; v != nil {
 		printVehicle(w, v)
 	}
-	fmt.Fprintln(w, "\nEnergy book in kJ")
-	a := account{most: mostLines}
+	fmt.Fprintln(w, "\nEnergy book in kJ: work in + heat in = heat out + stored + missing")
+	a := account{most: mostLines, show: kilojoules(largest(b))}
 	if whole {
 		a.most = math.MaxInt
 	}
@@ -26,13 +27,13 @@ func printBook(w io.Writer, b *energy.Book, whole bool) {
 		a.line(d.Name, d.Heat)
 	}
 	a.head("heat in", b.HeatIn)
-	a.border(b, func(p energy.PathLine, in float64) (float64, bool) { return in, in > 0 && !isDissipator(b, p.Element) })
-	a.head("heat out", -b.HeatOut)
-	a.border(b, func(p energy.PathLine, in float64) (float64, bool) { return in, in < 0 && !isDissipator(b, p.Element) })
-	a.head("stored", -b.Stored)
+	a.border(b, 1)
+	a.head("heat out", b.HeatOut)
+	a.border(b, -1)
+	a.head("stored", b.Stored)
 	for _, n := range b.Nodes {
 		if !n.Held && n.Stored != 0 {
-			a.line(n.Name, -n.Stored)
+			a.line(n.Name, n.Stored)
 		}
 	}
 	a.head("missing", b.WorkIn+b.HeatIn-b.HeatOut-b.Stored)
@@ -43,8 +44,20 @@ func printBook(w io.Writer, b *energy.Book, whole bool) {
 	printChecks(w, b, whole)
 }
 
+// largest returns the largest amount of the book [J].
+func largest(b *energy.Book) float64 {
+	x := math.Max(math.Max(math.Abs(b.WorkIn), math.Abs(b.HeatIn)), math.Max(math.Abs(b.HeatOut), math.Abs(b.Stored)))
+	for _, n := range b.Nodes {
+		if !n.Held {
+			x = math.Max(x, math.Abs(n.Stored))
+		}
+	}
+	return x
+}
+
 // An account is a list of amounts with headings.
 type account struct {
+	show    func(j float64) string
 	rows    [][]string
 	most    int
 	inPart  int
@@ -56,7 +69,7 @@ type account struct {
 func (a *account) head(name string, total float64) {
 	a.close()
 	a.inPart = 0
-	a.rows = append(a.rows, []string{name, "", kilojoule(total)})
+	a.rows = append(a.rows, []string{name, "", a.show(total)})
 }
 
 // line adds an entry of the part.
@@ -66,13 +79,13 @@ func (a *account) line(name string, x float64) {
 		a.leftSum += x
 		return
 	}
-	a.rows = append(a.rows, []string{"  " + clip(name), kilojoule(x), ""})
+	a.rows = append(a.rows, []string{"  " + clip(name), a.show(x), ""})
 }
 
 // close sums up the entries of a part that were too many to show.
 func (a *account) close() {
 	if a.left > 0 {
-		a.rows = append(a.rows, []string{fmt.Sprintf("  and %d more", a.left), kilojoule(a.leftSum), ""})
+		a.rows = append(a.rows, []string{fmt.Sprintf("  and %d more", a.left), a.show(a.leftSum), ""})
 	}
 	a.left, a.leftSum = 0, 0
 }
@@ -82,42 +95,13 @@ func (a *account) flush(w io.Writer) {
 	columns(w, a.rows, map[int]bool{0: true})
 }
 
-// border adds the paths across the border that want keeps, with what they brought in.
-func (a *account) border(b *energy.Book, want func(p energy.PathLine, in float64) (float64, bool)) {
+// border adds the paths across the border, dissipators aside, that brought heat in (sign 1) or took it out (-1).
+func (a *account) border(b *energy.Book, sign float64) {
 	for _, p := range b.Paths {
-		if !p.Border {
-			continue
-		}
-		in := p.Net
-		if isBorder(b, p.To) {
-			in = -in
-		}
-		if x, ok := want(p, in); ok {
+		if x := sign * p.In; x > 0 && !p.Work {
 			a.line(p.Element, x)
 		}
 	}
-}
-
-// isBorder reports whether a name is outside or held.
-func isBorder(b *energy.Book, name string) bool {
-	if name == "" {
-		return true
-	}
-	for i := range b.Nodes {
-		if b.Nodes[i].Name == name {
-			return b.Nodes[i].Held
-		}
-	}
-	return false
-}
-
-func isDissipator(b *energy.Book, name string) bool {
-	for i := range b.Dissipators {
-		if b.Dissipators[i].Name == name {
-			return true
-		}
-	}
-	return false
 }
 
 // printVehicle prints the mechanical account.
@@ -127,28 +111,44 @@ func printVehicle(w io.Writer, v *energy.VehicleLine) {
 	if v.Brake != 0 {
 		part = fmt.Sprintf("%s of it by the dissipators of this netlist", share(v.Modelled, v.Brake))
 	}
+	most := 0.0
+	for _, x := range []float64{v.Drive, v.Brake, v.Air, v.Rolling, v.Climb, v.Kinetic} {
+		most = math.Max(most, math.Abs(x))
+	}
+	show := kilojoules(most)
+	slope, climb := "climbing took", v.Climb
+	if climb < 0 {
+		slope, climb = "descending gave", -climb
+	}
 	columns(w, [][]string{
-		{"the drive gave", kilojoule(v.Drive), ""},
-		{"brakes took", kilojoule(v.Brake), part},
-		{"air drag took", kilojoule(v.Air), ""},
-		{"rolling took", kilojoule(v.Rolling), ""},
-		{"climbing took", kilojoule(v.Climb), ""},
-		{"gain of kinetic energy", kilojoule(v.Kinetic), ""},
+		{"the drive gave", show(v.Drive), ""},
+		{slope, show(climb), ""},
+		{"brakes took", show(v.Brake), part},
+		{"air drag took", show(v.Air), ""},
+		{"rolling took", show(v.Rolling), ""},
+		{"gain of kinetic energy", show(v.Kinetic), ""},
 	}, map[int]bool{0: true, 2: true})
 }
 
 // printInside prints the heat that passed between the nodes inside.
 func printInside(w io.Writer, b *energy.Book) {
+	most := 0.0
+	for _, p := range b.Paths {
+		if p.Inside {
+			most = math.Max(most, math.Abs(p.Net))
+		}
+	}
+	show := kilojoules(most)
 	var rows [][]string
 	for _, p := range b.Paths {
 		if p.Inside {
-			rows = append(rows, []string{clip(p.Element), clip(p.From) + " to " + clip(p.To), kilojoule(p.Net)})
+			rows = append(rows, []string{clip(p.Element), clip(p.From) + " to " + clip(p.To), show(p.Net)})
 		}
 	}
 	if len(rows) == 0 {
 		return
 	}
-	fmt.Fprintln(w, "\nHeat between nodes, on balance, in kJ")
+	fmt.Fprintln(w, "\nNet heat between nodes of the run, in kJ")
 	columns(w, rows, map[int]bool{0: true, 1: true})
 }
 
@@ -160,6 +160,12 @@ func printChecks(w io.Writer, b *energy.Book, whole bool) {
 	}
 	fmt.Fprintf(w, "\n%s: %s missing by the ledger (%s of the throughput), %s by the recount (%s).\n",
 		verdict, joule(b.LedgerGap), part(b.LedgerGap, b.Throughput), joule(b.IndependentGap), part(b.IndependentGap, b.Throughput))
+	for _, c := range b.Checks {
+		if c.Layer == 3 {
+			fmt.Fprintf(w, "A second run at a tenth of the tolerance moved the highest temperatures by %s K at most (%s K allowed).\n",
+				plain(c.Gap), plain(c.Allowed))
+		}
+	}
 	if !whole && b.Closed {
 		return
 	}
@@ -175,11 +181,11 @@ func printChecks(w io.Writer, b *energy.Book, whole bool) {
 	columns(w, rows, map[int]bool{0: true, 1: true, 4: true, 5: true, 6: true})
 }
 
-func joule(x float64) string { return fmt.Sprintf("%.2g J", x) }
+func joule(x float64) string { return plain(x) + " J" }
 
 func part(x, of float64) string {
 	if of == 0 {
 		return "no energy passed the border"
 	}
-	return fmt.Sprintf("%.1g", x/of)
+	return strings.NewReplacer("e-0", "e-").Replace(fmt.Sprintf("%.1g", x/of))
 }

@@ -23,7 +23,12 @@ its keys with units, ranges and defaults, its law and source; or the property ta
 
 Exit codes: 0 fine; 2 no such kind or material.`,
 		Example: "  workheat catalogue convection\n  workheat catalogue \"grey iron\"",
-		Args:    cobra.MaximumNArgs(1),
+		Args: func(c *cobra.Command, args []string) error {
+			if len(args) > 1 {
+				return fmt.Errorf("catalogue takes one name; write a name of several words in quotes: %q", strings.Join(args, " "))
+			}
+			return nil
+		},
 	}
 	c.RunE = func(c *cobra.Command, args []string) error {
 		cat := library.Catalogue()
@@ -38,7 +43,7 @@ Exit codes: 0 fine; 2 no such kind or material.`,
 
 // printCatalogue prints the list of all kinds and materials.
 func printCatalogue(w io.Writer, cat *element.Catalogue) {
-	for _, section := range []element.Section{element.Conductances, element.Sources, element.Bodies, element.Dissipators} {
+	for _, section := range element.Sections {
 		fmt.Fprintf(w, "%s\n", section)
 		for _, name := range cat.Names(section) {
 			fmt.Fprintln(w, wrap("  "+name+": "+cat.Find(section, name).About, 6))
@@ -71,10 +76,26 @@ func printEntry(w io.Writer, cat *element.Catalogue, name string) error {
 		return nil
 	}
 	text := fmt.Sprintf("the catalogue has no %q", name)
-	if near := diag.Nearest(name, known); near != "" {
+	switch near, with := diag.Nearest(name, known), containing(known, name); {
+	case near != "":
 		text += fmt.Sprintf(": did you mean %q?", near)
+	case len(with) > 0:
+		text += "; near to it: " + strings.Join(with, ", ")
+	default:
+		text += "; workheat catalogue lists all"
 	}
 	return coded{exitProblem, text}
+}
+
+// containing returns the names that contain a word.
+func containing(names []string, word string) []string {
+	var list []string
+	for _, n := range names {
+		if strings.Contains(n, strings.ToLower(word)) {
+			list = append(list, n)
+		}
+	}
+	return list
 }
 
 func printKind(w io.Writer, k *element.Kind) {

@@ -28,7 +28,7 @@ the phases.
 Exit codes: 0 fine; 1 with --strict: there are warnings; 2 the netlist or the command
 line has problems.`,
 		Example: "  workheat check examples/car-front-corner/netlist.json",
-		Args:    cobra.ExactArgs(1),
+		Args:    oneNetlist,
 	}
 	c.Flags().BoolVar(&opt.strict, "strict", false, "exit with 1 if there are warnings")
 	c.RunE = func(c *cobra.Command, args []string) error { return check(e, args[0], opt) }
@@ -85,7 +85,7 @@ func printDescription(w io.Writer, name string, model *network.Model) {
 		fmt.Fprintf(w, "Slowest time constant at the start: %s; fastest: %s\n", slow, unit.Time.Format(d.Fastest, 4))
 	}
 	fmt.Fprintf(w, "%d states, %d entries in the sparse matrix\n", d.States, d.Entries)
-	fmt.Fprintf(w, "Relative tolerance %g, absolute %s\n", model.Net.Rel, unit.TemperatureDifference.Format(model.Net.Abs, 3))
+	fmt.Fprintf(w, "Relative tolerance %s, absolute %s\n", plain(model.Net.Rel), unit.TemperatureDifference.Format(model.Net.Abs, 3))
 }
 
 // printElements prints the paths.
@@ -101,20 +101,28 @@ func printElements(w io.Writer, d *network.Description) {
 		if p.Conductance != 0 {
 			conductance = fmt.Sprintf("%.4g", p.Conductance)
 		}
-		rows = append(rows, []string{clip(p.Name), p.Kind, clip(end(p.From)), clip(end(p.To)), conductance, fmt.Sprintf("%.4g", p.Flow)})
+		rows = append(rows, []string{clip(p.Name), p.Kind, end(p.From, p.Work), end(p.To, false), conductance, watts(p.Flow)})
 	}
 	columns(w, rows, map[int]bool{0: true, 1: true, 2: true, 3: true})
+}
+
+// watts shows a power with four figures, and rounding below a billionth of a watt as none.
+func watts(x float64) string {
+	switch a := math.Abs(x); {
+	case a < 1e-9:
+		return "0"
+	case a >= 1000 && a < 1e9:
+		return fmt.Sprintf("%.0f", x)
+	}
+	return fmt.Sprintf("%.4g", x)
 }
 
 // printPhases prints the duty.
 func printPhases(w io.Writer, d *network.Description) {
 	fmt.Fprintln(w, "\nDuty")
+	var rows [][]string
 	for _, p := range d.Phases {
-		indent := strings.Repeat("  ", 1+strings.Count(p.Label, "."))
-		fmt.Fprintf(w, "%s%s", indent, p.Label)
-		if p.Count > 0 {
-			fmt.Fprintf(w, " %d times", p.Count)
-		}
-		fmt.Fprintln(w)
+		rows = append(rows, []string{strings.Repeat("  ", p.Depth) + p.Label, p.Words})
 	}
+	columns(w, rows, map[int]bool{0: true, 1: true})
 }

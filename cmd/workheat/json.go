@@ -3,6 +3,7 @@ package main
 import (
 	"fmt"
 	"io"
+	"math"
 	"path/filepath"
 
 	"github.com/goccy/go-json"
@@ -23,6 +24,7 @@ type runJSON struct {
 	Nodes       map[string]nodeJSON `json:"nodes"`
 	Order       []string            `json:"node_order"`
 	Energy      *energyJSON         `json:"energy"`
+	Vehicle     *vehicleJSON        `json:"vehicle"`
 	Stats       statsJSON           `json:"stats"`
 	Warnings    []string            `json:"warnings"`
 }
@@ -48,16 +50,18 @@ type limitJSON struct {
 }
 
 type energyJSON struct {
-	WorkIn         float64     `json:"work_in"`
-	HeatIn         float64     `json:"heat_in"`
-	HeatOut        float64     `json:"heat_out"`
-	Stored         float64     `json:"stored"`
-	Throughput     float64     `json:"throughput"`
-	LedgerGap      float64     `json:"ledger_gap"`
-	IndependentGap float64     `json:"independent_gap"`
-	Closed         bool        `json:"closed"`
-	Paths          []pathJSON  `json:"paths"`
-	Checks         []checkJSON `json:"checks"`
+	WorkIn         float64            `json:"work_in"`
+	HeatIn         float64            `json:"heat_in"`
+	HeatOut        float64            `json:"heat_out"`
+	Stored         float64            `json:"stored"`
+	Throughput     float64            `json:"throughput"`
+	LedgerGap      float64            `json:"ledger_gap"`
+	IndependentGap float64            `json:"independent_gap"`
+	Closed         bool               `json:"closed"`
+	Work           map[string]float64 `json:"work_by_dissipator"`
+	StoredBy       map[string]float64 `json:"stored_by_node"`
+	Paths          []pathJSON         `json:"paths"`
+	Checks         []checkJSON        `json:"checks"`
 }
 
 type pathJSON struct {
@@ -65,6 +69,19 @@ type pathJSON struct {
 	From    *string `json:"from"`
 	To      *string `json:"to"`
 	Net     float64 `json:"net"`
+}
+
+// drive = kinetic + climb + rolling + air + brake.
+type vehicleJSON struct {
+	Name     string  `json:"name"`
+	Distance float64 `json:"distance"`
+	Drive    float64 `json:"drive"`
+	Kinetic  float64 `json:"kinetic"`
+	Climb    float64 `json:"climb"`
+	Rolling  float64 `json:"rolling"`
+	Air      float64 `json:"air"`
+	Brake    float64 `json:"brake"`
+	Modelled float64 `json:"brake_by_dissipators"`
 }
 
 type checkJSON struct {
@@ -95,7 +112,7 @@ type statsJSON struct {
 func printJSON(w io.Writer, name string, res *network.Result, used float64) error {
 	j := runJSON{
 		Netlist: filepath.Base(name), Title: res.Model.Net.Title, Program: "workheat " + version, Caution: network.Caution,
-		Units: map[string]string{"temperature": "K", "margin": "K", "time": "s", "energy": "J"},
+		Units: map[string]string{"temperature": "K", "margin": "K", "time": "s", "energy": "J", "distance": "m"},
 		End:   res.End, Interrupted: res.Interrupted, Nodes: map[string]nodeJSON{}, Warnings: allWarnings(res),
 	}
 	if j.Warnings == nil {
@@ -117,6 +134,10 @@ func printJSON(w io.Writer, name string, res *network.Result, used float64) erro
 		j.Order = append(j.Order, s.Name)
 	}
 	j.Energy = energyOf(res)
+	if b := res.Book; b != nil && b.Vehicle != nil {
+		v := b.Vehicle
+		j.Vehicle = &vehicleJSON{v.Name, v.Distance, v.Drive, v.Kinetic, v.Climb, v.Rolling, v.Air, v.Brake, v.Modelled}
+	}
 	s := res.Stats
 	j.Stats = statsJSON{res.Method, res.Rel, s.Steps, s.Rejected, s.Rates, s.Jacobians, s.Factorizations, s.Solves, s.Restarts, s.Events, used}
 	text, err := json.MarshalIndent(j, "", "  ")
@@ -133,7 +154,15 @@ func energyOf(res *network.Result) *energyJSON {
 		return nil
 	}
 	e := &energyJSON{WorkIn: b.WorkIn, HeatIn: b.HeatIn, HeatOut: b.HeatOut, Stored: b.Stored, Throughput: b.Throughput,
-		LedgerGap: b.LedgerGap, IndependentGap: b.IndependentGap, Closed: b.Closed}
+		LedgerGap: b.LedgerGap, IndependentGap: b.IndependentGap, Closed: b.Closed, Work: map[string]float64{}, StoredBy: map[string]float64{}}
+	for _, d := range b.Dissipators {
+		e.Work[d.Name] = d.Work
+	}
+	for _, n := range b.Nodes {
+		if !n.Held {
+			e.StoredBy[n.Name] = n.Stored
+		}
+	}
 	name := func(s string) *string {
 		if s == "" {
 			return nil
@@ -147,4 +176,12 @@ func energyOf(res *network.Result) *energyJSON {
 		e.Checks = append(e.Checks, checkJSON{c.Layer, c.Name, c.Gap, c.Allowed, c.Unit, c.Passed, c.Where})
 	}
 	return e
+}
+
+// finite returns nil for a number that JSON cannot hold.
+func finite(x float64) *float64 {
+	if math.IsNaN(x) || math.IsInf(x, 0) {
+		return nil
+	}
+	return &x
 }

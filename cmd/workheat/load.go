@@ -3,21 +3,30 @@ package main
 import (
 	"errors"
 	"fmt"
-	"io"
 	"os"
 	"path/filepath"
+
+	"github.com/spf13/cobra"
 
 	"workheat/library"
 	"workheat/network"
 	"workheat/network/diag"
 )
 
+// oneNetlist is the argument of run and check.
+func oneNetlist(c *cobra.Command, args []string) error {
+	if len(args) != 1 {
+		return fmt.Errorf("%s takes the name of one netlist, not %d", c.Name(), len(args))
+	}
+	return nil
+}
+
 // load reads a netlist file and reports its problems. It returns an error that is already reported when
 // the netlist cannot be used.
 func load(e env, name string) (*network.Model, error) {
 	text, err := os.ReadFile(name)
 	if err != nil {
-		return nil, coded{exitProblem, fmt.Sprintf("%s cannot be read: %s", name, reason(err))}
+		return nil, coded{exitProblem, fmt.Sprintf("%s cannot be read: %s", name, diag.Reason(err))}
 	}
 	folder := filepath.Dir(name)
 	open := func(file string) ([]byte, error) {
@@ -44,18 +53,6 @@ func load(e env, name string) (*network.Model, error) {
 	return nil, coded{exitProblem, fmt.Sprintf("%s has %d %s; nothing was run", name, faults, what)}
 }
 
-// reason returns the innermost text of an error.
-func reason(err error) string {
-	for {
-		inner := errors.Unwrap(err)
-		if inner == nil {
-			return err.Error()
-		}
-		err = inner
-	}
-}
-
 func render(e env, problems []diag.Problem) {
-	var w io.Writer = e.err
-	diag.Render(w, problems, e.colour)
+	diag.Render(e.err, problems, e.colour)
 }

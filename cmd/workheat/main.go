@@ -9,6 +9,7 @@ import (
 	"io"
 	"os"
 	"os/signal"
+	"path/filepath"
 	"syscall"
 
 	"github.com/spf13/cobra"
@@ -19,7 +20,7 @@ var version = "0.1.0"
 
 // The exit codes.
 const (
-	exitLimit       = 1   // a limit is exceeded or the book does not close, when asked to be strict
+	exitLimit       = 1   // when asked to be strict: a limit is exceeded, the book does not close, the netlist has warnings
 	exitProblem     = 2   // the netlist or the command line has problems
 	exitFailed      = 3   // the numbers failed
 	exitInterrupted = 130 // interrupted; what was recorded is kept
@@ -70,6 +71,10 @@ func execute(ctx context.Context, e env, args []string) int {
 		return c.code
 	}
 	fmt.Fprintln(e.err, "workheat:", err)
+	if len(args) > 0 && filepath.Ext(args[0]) == ".json" {
+		fmt.Fprintln(e.err, "to run a netlist: workheat run", args[0])
+		return exitProblem
+	}
 	fmt.Fprintln(e.err, "see workheat --help")
 	return exitProblem
 }

@@ -3,7 +3,6 @@ package main
 import (
 	"context"
 	"fmt"
-	"math"
 	"os"
 	"path/filepath"
 	"time"
@@ -12,8 +11,8 @@ import (
 
 	"workheat/cmd/cpu"
 	"workheat/network"
+	"workheat/network/diag"
 	"workheat/network/export"
-	"workheat/network/record"
 	"workheat/network/unit"
 )
 
@@ -42,15 +41,15 @@ Exit codes: 0 fine; 1 with --strict: a limit is exceeded or the book does not cl
 (what was recorded is printed and written).`,
 		Example: `  workheat run examples/car-front-corner/netlist.json
   workheat run netlist.json -o run.csv -o run.xlsx -o run.png --every 0.5s`,
-		Args: cobra.ExactArgs(1),
+		Args: oneNetlist,
 	}
 	f := c.Flags()
-	f.StringArrayVarP(&opt.files, "output", "o", nil, "write a file (.csv, .xlsx, .png, .svg); may be given again")
+	f.StringArrayVarP(&opt.files, "output", "o", nil, "write a file, by the end of its name "+export.Suffixes()+"; may be given again")
 	f.StringVar(&opt.every, "every", "", "interval of the samples in files, such as 0.5s")
 	f.Float64Var(&opt.rel, "relative", 0, "relative tolerance, in place of the netlist's")
 	f.BoolVar(&opt.json, "json", false, "print one JSON object instead of tables")
 	f.BoolVar(&opt.book, "book", false, "print the whole energy book, line by line")
-	f.BoolVar(&opt.tolerance, "tolerance-check", false, "run again at a tenth of the tolerance and book the change of every peak")
+	f.BoolVar(&opt.tolerance, "tolerance-check", false, "run again at a tenth of the tolerance and tell how far the peaks move")
 	f.BoolVar(&opt.strict, "strict", false, "exit with 1 if a limit is exceeded or the book does not close")
 	f.BoolVarP(&opt.quiet, "quiet", "q", false, "no progress, no notes on standard error")
 	c.RunE = func(c *cobra.Command, args []string) error { return run(c.Context(), e, args[0], opt) }
@@ -93,8 +92,8 @@ func (o *runOptions) check() (every float64, err error) {
 		}
 		every = x
 	}
-	if o.rel != 0 && !(o.rel >= 1e-12 && o.rel <= 0.1) {
-		return 0, coded{exitProblem, "--relative must lie between 1e-12 and 0.1"}
+	if o.rel != 0 && !(o.rel >= network.LeastRel && o.rel <= network.MostRel) {
+		return 0, coded{exitProblem, fmt.Sprintf("--relative must lie between %g and %g", network.LeastRel, network.MostRel)}
 	}
 	for _, f := range o.files {
 		if _, err := export.ForFile(f); err != nil {
@@ -141,7 +140,7 @@ func writeFiles(e env, name string, opt runOptions, res *network.Result, every f
 	}
 	text, err := os.ReadFile(name)
 	if err != nil {
-		return coded{exitProblem, fmt.Sprintf("%s cannot be read again: %s", name, reason(err))}
+		return coded{exitProblem, fmt.Sprintf("%s cannot be read again: %s", name, diag.Reason(err))}
 	}
 	o := &export.Outcome{
 		Title: title(res, name), Source: filepath.Base(name), Netlist: text, Program: "workheat " + version,
@@ -153,11 +152,11 @@ func writeFiles(e env, name string, opt runOptions, res *network.Result, every f
 			{"absolute tolerance", unit.TemperatureDifference.Format(res.Abs, 3)},
 			{"steps", fmt.Sprint(res.Stats.Steps)},
 		},
-		Series: func(interval float64) *record.Series { return res.Series(interval) },
+		Series: res.Series,
 	}
 	for _, f := range opt.files {
 		if err := export.ToFile(f, o); err != nil {
-			return coded{exitProblem, fmt.Sprintf("writing %s: %s", f, reason(err))}
+			return coded{exitProblem, fmt.Sprintf("writing %s: %s", f, diag.Reason(err))}
 		}
 		if !opt.quiet {
 			fmt.Fprintf(e.err, "wrote %s\n", f)
@@ -209,12 +208,4 @@ func exceeded(res *network.Result) int {
 		}
 	}
 	return n
-}
-
-// finite returns nil for a number that JSON cannot hold.
-func finite(x float64) *float64 {
-	if math.IsNaN(x) || math.IsInf(x, 0) {
-		return nil
-	}
-	return &x
 }

@@ -31,18 +31,18 @@ func printRun(w io.Writer, name string, res *network.Result, whole bool) {
 	if all := allWarnings(res); len(all) > 0 {
 		fmt.Fprintln(w, "\nWarnings")
 		for _, text := range all {
-			fmt.Fprintf(w, "  %s\n", text)
+			fmt.Fprintln(w, wrap("  "+text, 4))
 		}
 	}
 	if res.Interrupted {
 		fmt.Fprintf(w, "\nInterrupted at %s: the tables hold what was reached.\n", clock(res.End))
 	}
 	s := res.Stats
-	fmt.Fprintf(w, "\n%s, relative tolerance %g: %d steps, %d rejected\n", res.Method, res.Rel, s.Steps, s.Rejected)
-	fmt.Fprintf(w, "%s\n", network.Caution)
+	fmt.Fprintf(w, "\n%s, relative tolerance %s: %d steps, %d rejected\n", res.Method, plain(res.Rel), s.Steps, s.Rejected)
+	fmt.Fprintln(w, wrap(network.Caution, 0))
 }
 
-// columns aligns tab-separated cells: the first to the left, the others to the right.
+// columns aligns the cells of rows: the columns in left to the left, the others to the right.
 func columns(w io.Writer, rows [][]string, left map[int]bool) {
 	var width []int
 	for _, row := range rows {
@@ -72,7 +72,7 @@ func columns(w io.Writer, rows [][]string, left map[int]bool) {
 
 // printNodes prints the table of nodes, one more line for each further limit.
 func printNodes(w io.Writer, list []record.Summary) {
-	fmt.Fprintln(w, "Temperatures in degC")
+	fmt.Fprintln(w, "Temperatures in degC (low after: the lowest after the first peak)")
 	rows := [][]string{{"node", "start", "highest", "at", "low after", "end", "limit", "", "margin K", "time above"}}
 	for i, s := range list {
 		if i == mostNodes {
@@ -132,42 +132,64 @@ func clip(name string) string {
 func printPaths(w io.Writer, b *energy.Book) {
 	paths := append([]energy.PathLine(nil), b.Paths...)
 	sort.SliceStable(paths, func(i, j int) bool { return math.Abs(paths[i].Net) > math.Abs(paths[j].Net) })
+	if len(paths) == 0 || paths[0].Net == 0 {
+		return
+	}
+	show := kilojoules(paths[0].Net)
 	var rows [][]string
 	for _, p := range paths {
 		if len(rows) == mostPaths || p.Net == 0 {
 			break
 		}
-		from, to, net := p.From, p.To, p.Net
+		from, to, net := end(p.From, p.Work), end(p.To, false), p.Net
 		if net < 0 {
 			from, to, net = to, from, -net
 		}
-		rows = append(rows, []string{clip(p.Element), clip(end(from)) + " to " + clip(end(to)), kilojoule(net), share(net, b.WorkIn+b.HeatIn)})
+		rows = append(rows, []string{clip(p.Element), from + " to " + to, show(net), share(net, b.WorkIn+b.HeatIn)})
 	}
-	if len(rows) == 0 {
-		return
-	}
-	fmt.Fprintln(w, "\nTop heat paths, on balance of the run, in kJ and as a share of what came in")
+	fmt.Fprintln(w, "\nLargest heat paths: net heat of the run in kJ, and as a share of all that came in")
 	columns(w, rows, map[int]bool{0: true, 1: true})
 }
 
-func end(name string) string {
-	if name == "" {
-		return "outside"
+// end names one end of a path; what a dissipator turns into heat comes from work.
+func end(name string, dissipator bool) string {
+	switch {
+	case name != "":
+		return clip(name)
+	case dissipator:
+		return "work"
 	}
-	return name
+	return "outside"
 }
 
-func kilojoule(j float64) string {
-	k := j / 1000
-	switch a := math.Abs(k); {
-	case a == 0:
-		return "0"
-	case a >= 1e7 || a < 1e-3:
-		return fmt.Sprintf("%.4g", k)
-	case a >= 1000:
-		return fmt.Sprintf("%.0f", k)
+// kilojoules returns how the energies of one table are shown, all with the same decimals: five figures of the
+// largest [J].
+func kilojoules(largest float64) func(j float64) string {
+	largest = math.Abs(largest) / 1000
+	if largest != 0 && (largest >= 1e9 || largest < 1e-3) {
+		return func(j float64) string { return fmt.Sprintf("%.4g", j/1000) }
 	}
-	return fmt.Sprintf("%.4g", k)
+	decimals := 1
+	if largest != 0 {
+		decimals = max(0, 4-int(math.Floor(math.Log10(largest))))
+	}
+	zero := fmt.Sprintf("%.*f", decimals, 0.0)
+	return func(j float64) string {
+		text := fmt.Sprintf("%.*f", decimals, j/1000)
+		if text == "-"+zero {
+			return zero
+		}
+		return text
+	}
+}
+
+// plain shows a number with few figures, without the zeros of a machine's exponent.
+func plain(x float64) string {
+	text := fmt.Sprintf("%.2g", x)
+	if a := math.Abs(x); a >= 10 && a < 1e6 {
+		text = fmt.Sprintf("%.0f", x)
+	}
+	return strings.NewReplacer("e-0", "e-", "e+0", "e", "e+", "e").Replace(text)
 }
 
 func share(x, of float64) string {

@@ -59,7 +59,7 @@ func readProblem(text []byte) (*problem, error) {
 		return nil, fmt.Errorf("the format %q is not bench-net-1", p.Format)
 	}
 	if len(p.Mech) > 0 {
-		return nil, fmt.Errorf("%s has a mechanical part, which the netlist cannot say yet", p.Name)
+		return nil, fmt.Errorf("%s has a mechanical part, which a netlist cannot say", p.Name)
 	}
 	return p, nil
 }
@@ -70,14 +70,12 @@ type writer struct {
 	first bool
 }
 
-func (w *writer) section(name string, open bool) {
-	if open {
-		fmt.Fprintf(w, ",\n%q: {", name)
-		w.first = true
-		return
-	}
-	w.WriteString("\n}")
+func (w *writer) open(section string) {
+	fmt.Fprintf(w, ",\n%q: {", section)
+	w.first = true
 }
+
+func (w *writer) close() { w.WriteString("\n}") }
 
 func (w *writer) entry(format string, args ...any) {
 	if !w.first {
@@ -94,19 +92,19 @@ func num(x float64) string { return strconv.FormatFloat(x, 'g', -1, 64) }
 func (p *problem) netlist() []byte {
 	w := &writer{}
 	fmt.Fprintf(w, "{\"workheat\": 1, \"title\": %q", p.Name)
-	w.section("signals", true)
+	w.open("signals")
 	w.entry(`"speed": %s`, p.table(p.Segment.V0, p.Segment.V1, "m/s"))
 	w.entry(`"power": %s`, p.table(p.Segment.P0, p.Segment.P1, "W"))
-	w.section("signals", false)
-	w.section("nodes", true)
+	w.close()
+	w.open("nodes")
 	for i := range p.Node.C0 {
 		w.entry(`"n%d": {"heat capacity": %s, "start": "%s K"}`, i, p.capacity(i), num(p.Node.T0[i]))
 	}
 	for i, t := range p.Boundary.T {
 		w.entry(`"b%d": {"held": "%s K"}`, i, num(t))
 	}
-	w.section("nodes", false)
-	w.section("conductances", true)
+	w.close()
+	w.open("conductances")
 	for k := range p.Link.G {
 		w.entry(`"l%d": {"kind": "conduction", "between": ["n%d", "n%d"], "value": "%s W/K"}`, k, p.Link.A[k], p.Link.B[k], num(p.Link.G[k]))
 	}
@@ -121,7 +119,7 @@ func (p *problem) netlist() []byte {
 	for k := range p.Rad.EA {
 		w.entry(`"r%d": {"kind": "radiation", "between": ["n%d", "b%d"], "emissivity": 1, "area": "%s m^2"}`, k, p.Rad.Node[k], p.Rad.Bnd[k], num(p.Rad.EA[k]))
 	}
-	w.section("conductances", false)
+	w.close()
 	p.sources(w)
 	fmt.Fprintf(w, ",\n\"duty\": [{\"rest\": {\"for\": \"%s s\"}}]}\n", num(p.End))
 	return []byte(w.String())
@@ -132,11 +130,11 @@ func (p *problem) sources(w *writer) {
 	if len(p.Heat.Node) == 0 {
 		return
 	}
-	w.section("sources", true)
+	w.open("sources")
 	for k := range p.Heat.Node {
 		w.entry(`"h%d": {"kind": "given heat", "into": "n%d", "factor": %s, "power": {"signal": "power"}}`, k, p.Heat.Node[k], num(p.Heat.Share[k]))
 	}
-	w.section("sources", false)
+	w.close()
 }
 
 // capacity writes C0 (1 + c1 (T - Tref)) as a table wide enough for any of the problems.

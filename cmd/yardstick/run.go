@@ -6,6 +6,7 @@ import (
 	"io"
 	"math"
 	"os"
+	"slices"
 	"time"
 
 	"github.com/goccy/go-json"
@@ -32,8 +33,11 @@ type answer struct {
 	Peak    []float64 `json:"peak"`
 }
 
-// repeats is how often a short run is done again; the median of its times counts.
-const repeats = 15
+// A short run is done repeats times, and the median of its times counts; one of longRun or more is timed once.
+const (
+	repeats = 15
+	longRun = 2 // s
+)
 
 // run reads a problem, runs it and prints the answer.
 func run(name string, rtol float64, w io.Writer) error {
@@ -60,7 +64,7 @@ func run(name string, rtol float64, w io.Writer) error {
 		}
 		a = p.measure(res)
 		cpus, walls = append(cpus, cpu.Seconds()-c0), append(walls, time.Since(t0).Seconds())
-		if walls[0] > 2 {
+		if walls[0] > longRun {
 			break
 		}
 	}
@@ -127,11 +131,5 @@ func (p *problem) segmentEnd(t float64) bool {
 }
 
 func median(x []float64) float64 {
-	sorted := append([]float64(nil), x...)
-	for i := range sorted {
-		for j := i; j > 0 && sorted[j] < sorted[j-1]; j-- {
-			sorted[j], sorted[j-1] = sorted[j-1], sorted[j]
-		}
-	}
-	return sorted[len(sorted)/2]
+	return slices.Sorted(slices.Values(x))[len(x)/2]
 }

@@ -9,6 +9,7 @@ type Event struct {
 	Name     string
 	Value    func(t float64, y []float64) float64 // a function of its arguments alone
 	Accuracy float64                              // the value may be this far past zero when the run ends
+	Coarse   bool                                 // a step that ends before zero need not be searched for it
 }
 
 const (
@@ -23,6 +24,9 @@ const (
 // not a number if that is not finite. Of simultaneous events the first in the list is returned.
 func (g *Integrator) landOnEvent(events []Event, norm float64) (int, float64) {
 	s := g.stepper.Step()
+	if !mayPass(s, events) {
+		return -1, norm
+	}
 	g.stepper.Dense(g.dense)
 	theta, which := g.crossing(s, events)
 	if which < 0 {
@@ -38,6 +42,16 @@ func (g *Integrator) landOnEvent(events []Event, norm float64) (int, float64) {
 		ok = g.stepper.Try(full)
 	}
 	return which, g.testError(ok)
+}
+
+// mayPass reports whether the tried step must be searched: not if all events are coarse and before zero at its end.
+func mayPass(s *Step, events []Event) bool {
+	for k := range events {
+		if e := &events[k]; !e.Coarse || e.Value(s.End, s.Y1) >= 0 {
+			return true
+		}
+	}
+	return false
 }
 
 // crossing returns the place θ in the step, just past zero, at which the first event passes by the dense

@@ -147,3 +147,37 @@ func TestEventsAtRandom(t *testing.T) {
 		}
 	}
 }
+
+// TestCoarseEvents finds a coarse event that a step ends past as any other, and may leave one that passes there and
+// back within a step.
+func TestCoarseEvents(t *testing.T) {
+	coarse := func(e ode.Event) ode.Event {
+		e.Coarse = true
+		return e
+	}
+	back := clock(func(t float64) float64 { return 0.01 - (t-0.31)*(t-0.31) })
+	cases := []struct {
+		name   string
+		events []ode.Event
+		which  int // -1: none
+		at     float64
+	}{
+		{"alone", []ode.Event{coarse(height(1, 1./3))}, 0, math.Asin(1. / 3)},
+		{"the later of two", []ode.Event{coarse(height(-1, 0.9)), height(1, 1./3)}, 1, math.Asin(1. / 3)},
+		{"the earlier of two", []ode.Event{height(-1, 0.9), coarse(height(1, 1./3))}, 1, math.Asin(1. / 3)},
+		{"there and back in a step", []ode.Event{coarse(back)}, -1, 0.7},
+		{"there and back beside one that is not coarse", []ode.Event{coarse(back), height(1, 2)}, 0, 0.21},
+	}
+	for _, c := range cases {
+		t.Run(c.name, func(t *testing.T) {
+			g := start(t, swing(), 1e-4)
+			stop := g.Run(context.Background(), 0.7, 0.7, c.events, nil)
+			if c.which < 0 && stop.Reason != ode.Reached || c.which >= 0 && (stop.Reason != ode.Passed || stop.Event != c.which) {
+				t.Fatalf("reason %d, event %d, want event %d", stop.Reason, stop.Event, c.which)
+			}
+			if math.Abs(stop.T-c.at) > 1e-4 {
+				t.Errorf("stopped at %.12g, want %.12g", stop.T, c.at)
+			}
+		})
+	}
+}

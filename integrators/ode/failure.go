@@ -9,7 +9,7 @@ import (
 // A Failure says where and how the numbers failed.
 type Failure struct {
 	Text  string
-	T, H  float64
+	T, H  float64 // where the step began, and its length; zero at a start
 	Worst []Worst // the states with the largest error over tolerance, at most three
 }
 

@@ -117,13 +117,3 @@ type Stats struct {
 	Restarts        int // starts after a jump, a break or an event
 	Events          int
 }
-
-// Eval returns the dense polynomial of state i at θ.
-func Eval(coef []float64, n, i int, theta float64) float64 {
-	k := len(coef)/n - 1
-	v := coef[k*n+i]
-	for k--; k >= 0; k-- {
-		v = v*theta + coef[k*n+i]
-	}
-	return v
-}

@@ -1,6 +1,9 @@
 package problems
 
-import "math"
+import (
+	"math"
+	"slices"
+)
 
 // VanDerPol is the relaxation oscillator in slow time, with 1/ε = 1e6.
 func VanDerPol() *Case {
@@ -78,7 +81,7 @@ const (
 )
 
 func ringFloor() []float64 {
-	f := repeat(15, 1e-2) // volts
+	f := slices.Repeat([]float64{1e-2}, 15) // volts
 	for i := 7; i < 15; i++ {
 		f[i] = 1e-6 // amperes
 	}

@@ -49,11 +49,11 @@ type Answer struct {
 	Digits float64   // to which the answer is sure
 }
 
-// A System is a case as equations. Quadratures, if asked for, integrate f itself: their totals must be
+// A system is a case as equations. Quadratures, if asked for, integrate f itself: their totals must be
 // Mass·(y − start).
-type System struct {
+type system struct {
 	*Case
-	Scale   func(d []float64, y []float64) // nil: ones
+	scale   func(d, y []float64) // nil: ones
 	pattern *sparse.Pattern
 	slots   []int32 // of the entries in the order in which Slopes reports them
 	cols    []int32
@@ -88,7 +88,7 @@ func (c *Case) Relative() func(d, y []float64) {
 // Bind makes a problem of the case. scale may be nil; quadratures says whether f is to be integrated too.
 func (c *Case) Bind(scale func(d, y []float64), quadratures bool) *ode.Problem {
 	n := c.N()
-	s := &System{Case: c, Scale: scale, a: nil, d: make([]float64, n), ft: make([]float64, n)}
+	s := &system{Case: c, scale: scale, d: make([]float64, n), ft: make([]float64, n)}
 	var pairs [][2]int32
 	c.Slopes(func(i, j int, _ float64) {
 		pairs = append(pairs, [2]int32{int32(i), int32(j)})
@@ -110,24 +110,24 @@ func (c *Case) Bind(scale func(d, y []float64), quadratures bool) *ode.Problem {
 }
 
 // Rates meets ode.System.
-func (s *System) Rates(f, q []float64, t float64, y []float64) {
+func (s *system) Rates(f, q []float64, t float64, y []float64) {
 	s.Case.Rates(f, t, y)
 	copy(q, f[:s.nq])
 }
 
 // collect takes an entry of df/dy.
-func (s *System) collect(_, j int, v float64) {
+func (s *system) collect(_, j int, v float64) {
 	s.a[s.slots[s.next]] += v * s.d[j]
 	s.next++
 }
 
 // Jacobian meets ode.System.
-func (s *System) Jacobian(a, d, ft []float64, t float64, y []float64) {
+func (s *system) Jacobian(a, d, ft []float64, t float64, y []float64) {
 	for i := range d {
 		s.d[i] = 1
 	}
-	if s.Scale != nil {
-		s.Scale(s.d, y)
+	if s.scale != nil {
+		s.scale(s.d, y)
 	}
 	copy(d, s.d)
 	clear(s.a)
@@ -139,7 +139,7 @@ func (s *System) Jacobian(a, d, ft []float64, t float64, y []float64) {
 }
 
 // AddSlopes meets ode.System.
-func (s *System) AddSlopes(dq []float64, h float64, v []float64, c float64) {
+func (s *system) AddSlopes(dq []float64, h float64, v []float64, c float64) {
 	for i := range dq {
 		row := s.pattern.RowStart[i]
 		sum := 0.0
@@ -195,13 +195,4 @@ func massAction(reactions []reaction, supply []float64) (func([]float64, float64
 		}
 	}
 	return rates, slopes
-}
-
-// repeat returns n times x.
-func repeat(n int, x float64) []float64 {
-	out := make([]float64, n)
-	for i := range out {
-		out[i] = x
-	}
-	return out
 }

@@ -64,7 +64,7 @@ func BenchmarkSolve(b *testing.B) {
 		for b.Loop() {
 			v.Solve(x, shift)
 		}
-		b.ReportMetric(float64(v.Fill()), "entries")
+		b.ReportMetric(float64(fill(v)), "entries")
 	})
 }
 
@@ -73,7 +73,7 @@ func BenchmarkSolve(b *testing.B) {
 func eachKind(b *testing.B, run func(b *testing.B, v *Solver, a, shift []float64)) {
 	for _, c := range benchCases {
 		p := c.pattern()
-		ordered := p.Renumber(Order(p))
+		ordered := renumbered(p, Order(p))
 		natural := make([]int32, p.N)
 		for i := range natural {
 			natural[i] = int32(i)
@@ -84,7 +84,7 @@ func eachKind(b *testing.B, run func(b *testing.B, v *Solver, a, shift []float64
 		}{
 			{"/ldl", NewSolver(p, true)},
 			{"/lu", NewSolver(p, false)},
-			{"/ldl/ordered", NewSolverInOrder(ordered, true, natural)},
+			{"/ldl/ordered", newSolver(ordered, true, natural)},
 		} {
 			b.Run(c.name+k.name, func(b *testing.B) {
 				a, shift := conduction(k.v.pattern, 1, !k.v.symmetric)

@@ -108,17 +108,12 @@ func (c *chain) meet(p, pe, q, qe float64, a, shift []float64) bool {
 	return acceptable(d, pe+(qe-ke), k)
 }
 
-// solve replaces x, in elimination order, by the solution.
-func (c *chain) solve(x []float64) { c.sweep(x, c.fore, c.back) }
-
-// solveTransposed is solve for the transpose.
-func (c *chain) solveTransposed(x []float64) { c.sweep(x, c.back, c.fore) }
-
-// sweep runs both recurrences to the middle and back out.
-func (c *chain) sweep(x, fore, back []float64) {
+// solve replaces x, in elimination order, by the solution: both recurrences
+// run to the middle and back out.
+func (c *chain) solve(x []float64) {
 	n, mid := c.s.n, c.mid
 	x = x[:n]
-	inv, fore, back := c.inv[:n], fore[:n-1], back[:n-1]
+	inv, fore, back := c.inv[:n], c.fore[:n-1], c.back[:n-1]
 	f, g := x[0], x[n-1]
 	i, j := 1, n-2
 	for ; i < mid && j > mid; i, j = i+1, j-1 {

@@ -16,7 +16,7 @@ const singularCondition = lostPivot / rounding
 type dense struct {
 	k        *mat.Dense
 	lu       mat.LU
-	u        mat.TriDense // the upper factor, refreshed on demand
+	u        mat.TriDense // the upper factor, taken out to name a singular row
 	row, col []float64    // scales
 	x        *mat.VecDense
 }
@@ -94,27 +94,15 @@ func powerOfTwo(size float64) float64 {
 	return p
 }
 
-// solve writes the solution of K x = b, or of the transposed system, to dst.
-func (f *dense) solve(dst, b []float64, transposed bool) {
-	in, out := f.row, f.col
-	if transposed {
-		in, out = out, in
-	}
+// solve writes the solution of K x = b to dst.
+func (f *dense) solve(dst, b []float64) {
 	x := f.x.RawVector().Data
 	for i, v := range b {
-		x[i] = v * in[i]
+		x[i] = v * f.row[i]
 	}
 	// The error only repeats what Cond said when K was factored.
-	_ = f.lu.SolveVecTo(f.x, transposed, f.x)
+	_ = f.lu.SolveVecTo(f.x, false, f.x)
 	for i, v := range x {
-		dst[i] = v * out[i]
-	}
-}
-
-// pivots writes the pivots of the scaled matrix to dst.
-func (f *dense) pivots(dst []float64) {
-	f.lu.UTo(&f.u)
-	for k := range dst {
-		dst[k] = f.u.At(k, k)
+		dst[i] = v * f.col[i]
 	}
 }

@@ -155,18 +155,10 @@ func (f *factors) factorLU(s *structure, a, shift []float64) (doubt, bad int) {
 	return doubt, -1
 }
 
-// solve replaces x, in elimination order, by the solution of L D U x.
-func (f *factors) solve(s *structure, x []float64) { substitute(s, f.lower, f.inv, f.upper, x) }
-
-// solveTransposed is solve for the transpose, U^T D L^T.
-func (f *factors) solveTransposed(s *structure, x []float64) {
-	substitute(s, f.upper, f.inv, f.lower, x)
-}
-
-// substitute solves with a unit lower triangular factor, a diagonal, and a
-// unit upper one. Forward it spreads each unknown over the rows below it,
-// backward it gathers.
-func substitute(s *structure, lower, inv, upper, x []float64) {
+// solve replaces x, in elimination order, by the solution of L D U x. Forward
+// it spreads each unknown over the rows below it, backward it gathers.
+func (f *factors) solve(s *structure, x []float64) {
+	lower, inv, upper := f.lower, f.inv, f.upper
 	for j := range s.n {
 		begin, end := s.colStart[j], s.colStart[j+1]
 		rows := s.row[begin:end]

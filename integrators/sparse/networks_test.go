@@ -95,3 +95,18 @@ func conduction(p *Pattern, seed uint64, stream bool) (a, shift []float64) {
 	}
 	return a, shift
 }
+
+// fill returns the number of entries of L with its diagonal.
+func fill(v *Solver) int { return len(v.s.row) + v.s.n }
+
+// renumbered returns the pattern in which unknown order[k] has the number k.
+func renumbered(p *Pattern, order []int32) *Pattern {
+	place := inverse(order, p.N)
+	var pairs [][2]int32
+	for i := range p.N {
+		for _, j := range p.Row(i) {
+			pairs = append(pairs, [2]int32{place[i], place[j]})
+		}
+	}
+	return NewPattern(p.N, pairs)
+}

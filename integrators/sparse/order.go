@@ -16,10 +16,6 @@ const denseFactor = 10
 // other network are stripped first, which costs no fill at all; what is left
 // is ordered by approximate minimum degree, which takes unknowns in series
 // next. The result depends on the pattern alone.
-//
-// A caller that numbers its unknowns this way from the start (see
-// [Pattern.Renumber] and [NewSolverInOrder]) saves the permutation of every
-// right-hand side.
 func Order(p *Pattern) []int32 {
 	if order, ok := chainOrder(p); ok {
 		return order

@@ -23,7 +23,7 @@ func TestNewPattern(t *testing.T) {
 	if p.NNZ() != 8 || p.Slot(2, 3) != 5 || p.Slot(0, 1) != -1 {
 		t.Errorf("%d slots, slot (2,3) = %d, slot (0,1) = %d; want 8, 5, -1", p.NNZ(), p.Slot(2, 3), p.Slot(0, 1))
 	}
-	if q := NewPattern(0, nil); q.NNZ() != 0 || NewSolver(q, true).Fill() != 0 {
+	if q := NewPattern(0, nil); q.NNZ() != 0 || fill(NewSolver(q, true)) != 0 {
 		t.Error("an empty pattern has entries")
 	}
 }
@@ -45,7 +45,7 @@ func TestTreesHaveNoFill(t *testing.T) {
 		cases = append(cases, randomTree(1+r.IntN(300), r))
 	}
 	for _, p := range cases {
-		if got, want := NewSolver(p, true).Fill(), 2*p.N-1; got != want {
+		if got, want := fill(NewSolver(p, true)), 2*p.N-1; got != want {
 			t.Errorf("tree of %d: %d entries, want %d", p.N, got, want)
 		}
 	}
@@ -58,7 +58,7 @@ func TestRingFill(t *testing.T) {
 		for i := range int32(n - 1) {
 			pairs = append(pairs, [2]int32{i, i + 1})
 		}
-		if got, want := NewSolver(NewPattern(n, pairs), true).Fill(), n+n+n-3; got != want {
+		if got, want := fill(NewSolver(NewPattern(n, pairs), true)), n+n+n-3; got != want {
 			t.Errorf("ring of %d: %d entries, want %d", n, got, want)
 		}
 	}
@@ -74,7 +74,7 @@ func TestWheelFill(t *testing.T) {
 			pairs = append(pairs, [2]int32{i, i + 1})
 		}
 	}
-	if got, want := NewSolver(NewPattern(n+1, pairs), true).Fill(), 4*n-2; got != want {
+	if got, want := fill(NewSolver(NewPattern(n+1, pairs), true)), 4*n-2; got != want {
 		t.Errorf("wheel: %d entries, want %d", got, want)
 	}
 }
@@ -110,7 +110,7 @@ func TestGridFill(t *testing.T) {
 		{"22 x 22 x 22", block(22), 1.27e6},
 	}
 	for _, c := range cases {
-		got := NewSolver(c.p, true).Fill()
+		got := fill(NewSolver(c.p, true))
 		t.Logf("%s: %d entries, AMD %g", c.name, got, c.amd)
 		if float64(got) > 1.1*c.amd {
 			t.Errorf("%s: %d entries, more than a tenth above %g", c.name, got, c.amd)
@@ -202,10 +202,10 @@ func TestStructureAgainstElimination(t *testing.T) {
 	})
 }
 
-func TestRenumber(t *testing.T) {
+func TestRenumbered(t *testing.T) {
 	p := brakeTwelve()
 	order := Order(p)
-	q := p.Renumber(order)
+	q := renumbered(p, order)
 	for k := range q.N {
 		for m := range q.N {
 			if there := p.Slot(int(order[k]), int(order[m])) >= 0; there != (q.Slot(k, m) >= 0) {

@@ -115,21 +115,6 @@ func (p *Pattern) Slot(i, j int) int {
 	return int(p.RowStart[i]) + k
 }
 
-// Renumber returns the pattern in which unknown order[k] has the number k.
-// An order that is not a permutation of all unknowns panics.
-func (p *Pattern) Renumber(order []int32) *Pattern {
-	place := inverse(order, p.N)
-	pairs := make([][2]int32, 0, (p.NNZ()-p.N)/2)
-	for i := range p.N {
-		for _, j := range p.Row(i) {
-			if int(j) > i {
-				pairs = append(pairs, [2]int32{place[i], place[j]})
-			}
-		}
-	}
-	return NewPattern(p.N, pairs)
-}
-
 // inverse returns place with place[order[k]] = k.
 func inverse(order []int32, n int) []int32 {
 	if len(order) != n {

@@ -175,7 +175,7 @@ func (m *small) solve(s *structure, f *factors, dst, b []float64) {
 	}
 }
 
-// substitute is the function of the same name with its forward part flat.
+// substitute is factors.solve with its forward part flat.
 func (m *small) substitute(x *[smallLimit]float64, lower, upper []float64) {
 	row, col := m.row[:len(lower)], m.col[:len(lower)]
 	for e, l := range lower {

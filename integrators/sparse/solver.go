@@ -3,7 +3,6 @@ package sparse
 import (
 	"errors"
 	"fmt"
-	"math"
 )
 
 // Kinds of failed factorisation, for errors.Is.
@@ -23,14 +22,6 @@ func (e *FactorError) Error() string { return fmt.Sprintf("row %d: %v", e.Row, e
 
 // Unwrap returns the kind.
 func (e *FactorError) Unwrap() error { return e.Kind }
-
-// Stats counts the work of a solver since it was made.
-type Stats struct {
-	Factorizations int // calls of Factor, failed ones included
-	Solves         int // systems solved, those of Refine and Condition included
-	Rechecks       int // factorisations repeated or tested because a pivot looked doubtful
-	Fallbacks      int // factorisations that went to dense LU with row exchanges
-}
 
 // denseLimit is the largest system that may fall back to dense LU with row
 // exchanges: 400 unknowns cost about 10 ms, still bearable for a step.
@@ -61,8 +52,10 @@ type Solver struct {
 	small     *small
 	dense     *dense
 	x         []float64 // right-hand side in elimination order
-	spare     []float64 // residuals, made on first use
-	stats     Stats
+
+	// For tests: factorisations that were repeated or tested because a pivot looked doubtful, and such as went
+	// to dense LU with row exchanges.
+	rechecks, fallbacks int
 }
 
 // NewSolver orders and analyses the pattern and allocates everything that
@@ -70,13 +63,12 @@ type Solver struct {
 // diagonal (row number smaller than column number) are read; those below are
 // taken to be equal.
 func NewSolver(p *Pattern, symmetric bool) *Solver {
-	return NewSolverInOrder(p, symmetric, Order(p))
+	return newSolver(p, symmetric, Order(p))
 }
 
-// NewSolverInOrder is NewSolver with the elimination order given: order[k] is
-// the unknown eliminated k-th. With 0, 1, 2, ... right-hand sides need no
-// permutation. An order that is not a permutation panics.
-func NewSolverInOrder(p *Pattern, symmetric bool, order []int32) *Solver {
+// newSolver is NewSolver with the elimination order given: order[k] is the
+// unknown eliminated k-th. An order that is not a permutation panics.
+func newSolver(p *Pattern, symmetric bool, order []int32) *Solver {
 	s := analyse(p, order, symmetric)
 	v := &Solver{pattern: p, symmetric: symmetric, s: s, prefer: generalKernel}
 	v.f = newFactors(s, symmetric)
@@ -90,15 +82,6 @@ func NewSolverInOrder(p *Pattern, symmetric bool, order []int32) *Solver {
 	return v
 }
 
-// Perm returns the elimination order; it must not be changed.
-func (v *Solver) Perm() []int32 { return v.s.order }
-
-// Fill returns the number of entries of L with its diagonal.
-func (v *Solver) Fill() int { return len(v.s.row) + v.s.n }
-
-// Stats returns the work done so far.
-func (v *Solver) Stats() Stats { return v.stats }
-
 // Factor computes the factors of K = diag(shift) - A, with A given in the
 // slots of the pattern. Neither slice is kept. A zero shift is allowed.
 //
@@ -111,12 +94,11 @@ func (v *Solver) Stats() Stats { return v.stats }
 // A floating network, coupled to nothing with a given value, is reported as
 // singular at one of its rows. Round-off can hide this on meshes of about a
 // hundred unknowns and more that have no shift at all and streams one way
-// throughout; there [Solver.ReciprocalCondition] tells.
+// throughout.
 func (v *Solver) Factor(a, shift []float64) error {
 	if len(a) != v.pattern.NNZ() || len(shift) != v.pattern.N {
 		panic("sparse: lengths of values and shift are not those of the pattern")
 	}
-	v.stats.Factorizations++
 	v.active = noFactor
 	if v.factorFast(a, shift) {
 		v.active = v.prefer
@@ -153,7 +135,7 @@ func (v *Solver) factorCarefully(a, shift []float64) error {
 	if row := v.pattern.notFinite(a, shift); row >= 0 {
 		return &FactorError{Row: row, Kind: ErrNotFinite}
 	}
-	v.stats.Rechecks++
+	v.rechecks++
 	doubt, bad := v.factorGeneral(a, shift)
 	if bad < 0 {
 		v.active = generalKernel
@@ -176,7 +158,7 @@ func (v *Solver) factorCarefully(a, shift []float64) error {
 
 // fallBack factors with row exchanges.
 func (v *Solver) fallBack(a, shift []float64) error {
-	v.stats.Fallbacks++
+	v.fallbacks++
 	if v.dense == nil {
 		v.dense = newDense(v.pattern.N)
 	}
@@ -194,12 +176,11 @@ func (v *Solver) Solve(dst, b []float64) {
 	if len(dst) != n || len(b) != n {
 		panic("sparse: length of dst or b is not the number of unknowns")
 	}
-	v.stats.Solves++
 	switch v.active {
 	case smallKernel:
 		v.small.solve(v.s, &v.f, dst, b)
 	case denseKernel:
-		v.dense.solve(dst, b, false)
+		v.dense.solve(dst, b)
 	case noFactor:
 		panic("sparse: Solve without factors")
 	default:
@@ -239,29 +220,4 @@ func scatter(dst, x []float64, order []int32) {
 	for k, i := range order {
 		dst[i] = x[k]
 	}
-}
-
-// PivotRange returns the smallest and the largest pivot by size; after a
-// fallback, those of the dense factors of the scaled matrix. It panics without
-// factors.
-func (v *Solver) PivotRange() (least, most float64) {
-	least = math.Inf(1)
-	inverse := v.f.inv
-	switch v.active {
-	case noFactor:
-		panic("sparse: PivotRange without factors")
-	case chainKernel:
-		inverse = v.chain.inv
-	case denseKernel:
-		v.dense.pivots(v.x)
-		for k, d := range v.x {
-			v.x[k] = 1 / d
-		}
-		inverse = v.x
-	}
-	for _, r := range inverse {
-		d := math.Abs(1 / r)
-		least, most = min(least, d), max(most, d)
-	}
-	return least, most
 }

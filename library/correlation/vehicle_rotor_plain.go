@@ -8,7 +8,8 @@ func (r VehicleRotor) Plain(speed, tFilm float64) float64 {
 	re := math.Abs(speed) * r.Diameter / nu
 	if re < rotorRest {
 		x := re / rotorRest
-		return rotorLaminar * math.Pow(rotorRest, 0.55) * (2.45*x*x - 1.45*x*x*x) * k / r.Diameter
+		const p = rotorLaminarExponent
+		return rotorLaminar * math.Pow(rotorRest, p) * ((3-p)*x*x - (2-p)*x*x*x) * k / r.Diameter
 	}
 	x := max(0, min((re-rotorBridgeLow)/(rotorBridgeHigh-rotorBridgeLow), 1))
 	weight := 3*x*x - 2*x*x*x

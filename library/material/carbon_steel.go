@@ -2,34 +2,22 @@ package material
 
 import "workheat/network/element"
 
-// SteelCapacity returns the specific heat capacity of carbon steel, J/(kg K), at theta in degC, for
-// 20 <= theta <= 1200. It jumps up by 0.3 at 600 degC and down by 0.4 at 900 degC and has a peak of 5000
-// at 735 degC, as published; at a jump it gives the value on the right. Outside the range it keeps the
-// end values.
-//
-// Source: EN 1993-1-2:2005, 3.4.1.2.
-func SteelCapacity(theta float64) float64 {
-	for _, b := range steelCapacity[:len(steelCapacity)-1] {
-		if theta < b.high {
-			return b.formula(max(theta, b.low))
-		}
-	}
-	return 650
-}
-
-// SteelConductivity returns the thermal conductivity of carbon steel, W/(m K), at theta in degC, for
+// steelConductivity returns the thermal conductivity of carbon steel, W/(m K), at theta in degC, for
 // 20 <= theta <= 1200. It falls by 0.06 at 800 degC. Outside the range it keeps the end values.
 //
 // Source: EN 1993-1-2:2005, 3.4.1.3.
-func SteelConductivity(theta float64) float64 {
+func steelConductivity(theta float64) float64 {
 	if theta < 800 {
 		return 54 - 3.33e-2*max(theta, 20)
 	}
 	return 27.3
 }
 
-// steelCapacity is the published formula on its parts of the range, J/(kg K) over degC.
-var steelCapacity = []branch{
+// steelBranches is the published specific heat capacity of carbon steel on the parts of its range, J/(kg K) over
+// degC. It jumps up by 0.3 at 600 degC and down by 0.4 at 900 degC and has a peak of 5000 at 735 degC, as published.
+//
+// Source: EN 1993-1-2:2005, 3.4.1.2.
+var steelBranches = []branch{
 	{20, 600, func(t float64) float64 { return 425 + t*(7.73e-1+t*(-1.69e-3+t*2.22e-6)) }},
 	{600, 735, func(t float64) float64 { return 666 + 13002/(738-t) }},
 	{735, 900, func(t float64) float64 { return 545 + 17820/(t-731) }},
@@ -41,7 +29,7 @@ var steelCapacity = []branch{
 const steelTolerance = 2e-4
 
 func carbonSteel() *element.Material {
-	at, c := sampled(steelTolerance, steelCapacity...)
+	at, c := sampled(steelTolerance, steelBranches...)
 	return &element.Material{
 		Name:     "carbon steel",
 		About:    "unalloyed and low-alloyed structural steel, with the heat of its change of structure near 735 degC",
@@ -49,7 +37,7 @@ func carbonSteel() *element.Material {
 		Density:  7850,
 		Capacity: element.MustCurve(kelvin(at), c),
 		Conductivity: element.MustCurve(kelvin([]float64{20, 800, 800, 1200}),
-			[]float64{SteelConductivity(20), 54 - 3.33e-2*800, 27.3, 27.3}),
+			[]float64{steelConductivity(20), 54 - 3.33e-2*800, 27.3, 27.3}),
 		Low:  20 + zeroCelsius,
 		High: 1200 + zeroCelsius,
 	}

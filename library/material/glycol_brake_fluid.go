@@ -8,8 +8,8 @@ func glycolBrakeFluid() *element.Material {
 		About:        "glycol-ether brake fluid, DOT 3, DOT 4 or DOT 5.1",
 		Source:       "density, c and k from memory; boiling points: 49 CFR 571.116 (FMVSS 116)",
 		Density:      1050,
-		Capacity:     constant(2200),
-		Conductivity: constant(0.18),
+		Capacity:     element.Constant(2200),
+		Conductivity: element.Constant(0.18),
 		Low:          -40 + zeroCelsius, // coldest test of the standard
 		High:         260 + zeroCelsius, // highest of the least boiling points
 		Limits: []element.Limit{

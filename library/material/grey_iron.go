@@ -31,7 +31,7 @@ func greyIron() *element.Material {
 		Limits: []element.Limit{
 			{Name: "iron anneals", Temperature: 649 + zeroCelsius, Source: "trade advice for racing discs, 1200 degF in the bulk"},
 		},
-		Doubtful: "c(T) is indicative: pure iron scaled to single data-sheet values; it lies 7 to 9 % above the means of " +
+		Doubtful: "c(T) is that of pure iron scaled to single data-sheet values; it lies 7 to 9 % above the means of " +
 			"EN 1561 (460 over 20-200 degC, 535 over 20-600 degC, from memory), which give hotter discs. " +
 			"k is from memory and grades differ: data sheets and papers give 46 to 53 W/(m K) near 20 degC",
 	}

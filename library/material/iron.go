@@ -23,11 +23,11 @@ const (
 	ironHigh = 1000.0
 )
 
-// IronCapacity returns the specific heat capacity of pure iron, J/(kg K), at temperature t in K, for
+// ironCapacity returns the specific heat capacity of pure iron, J/(kg K), at temperature t in K, for
 // 298 <= t <= 1000. Below it carries the formula on, above it keeps the end value.
 //
 // Source: NIST Chemistry WebBook, iron, after Chase (1998): Shomate coefficients to 700 K, rows above.
-func IronCapacity(t float64) float64 {
+func ironCapacity(t float64) float64 {
 	low, c := ironBreak, shomate(ironTo700, min(t, ironBreak))
 	for _, row := range ironAbove700 {
 		if t <= low {
@@ -46,7 +46,7 @@ func shomate(s [5]float64, t float64) float64 {
 
 // likeIron returns the corners of factor times the capacity of iron, over K, to 0.1 %.
 func likeIron(factor float64) (x, y []float64) {
-	x, y = sampled(1e-3, branch{ironLow, ironBreak, func(t float64) float64 { return factor * IronCapacity(t) }})
+	x, y = sampled(1e-3, branch{ironLow, ironBreak, func(t float64) float64 { return factor * ironCapacity(t) }})
 	for _, row := range ironAbove700 {
 		x, y = append(x, row[0]), append(y, factor*row[1]/ironMolarMass)
 	}

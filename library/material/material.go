@@ -42,9 +42,6 @@ func kelvin(celsius []float64) []float64 {
 	return celsius
 }
 
-// constant returns the curve of a property known by one value only.
-func constant(y float64) *element.Curve { return element.Constant(y) }
-
 // A branch is a published formula on its own part of the temperature range.
 type branch struct {
 	low, high float64

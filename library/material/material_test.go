@@ -3,6 +3,7 @@ package material
 import (
 	"math"
 	"os"
+	"slices"
 	"strings"
 	"testing"
 
@@ -41,7 +42,7 @@ func TestEveryMaterial(t *testing.T) {
 			if !(m.Density > 0) || m.Capacity == nil || m.Conductivity == nil {
 				t.Fatal("density, capacity or conductivity is missing")
 			}
-			if !(m.Capacity.Least() > 0) || !(m.Conductivity.Least() > 0) {
+			if !(slices.Min(m.Capacity.Y) > 0) || !(slices.Min(m.Conductivity.Y) > 0) {
 				t.Error("a property is not positive")
 			}
 			if !(0 < m.Low && m.Low < m.High) {

@@ -14,10 +14,10 @@ func nodularIron() *element.Material {
 			"c(T): NIST WebBook iron (Chase 1998, Shomate form to 700 K, rows above) times 1.0375, so that the mean over 20 to 200 degC is 502 J/(kg K)",
 		Density:      7085,
 		Capacity:     element.MustCurve(likeIron(nodularIronFactor)),
-		Conductivity: constant(36),
+		Conductivity: element.Constant(36),
 		Low:          ironLow,
 		High:         ironHigh,
-		Doubtful: "c(T) is indicative: pure iron scaled to one published value; it lies 10 % above the mean of EN 1563 " +
+		Doubtful: "c(T) is that of pure iron scaled to one published value; it lies 10 % above the mean of EN 1563 " +
 			"(515 over 20-500 degC, from memory), which gives hotter parts. k is one value; " +
 			"EN 1563 gives 31 to 36 W/(m K) at 300 degC by grade, from memory",
 	}

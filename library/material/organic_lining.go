@@ -8,8 +8,8 @@ func organicLining() *element.Material {
 		About:        "resin-bonded friction lining of pads and shoes",
 		Source:       "density 2400, k 1.31, c 1230: one set of values used in published student brake studies",
 		Density:      2400,
-		Capacity:     constant(1230),
-		Conductivity: constant(1.31),
+		Capacity:     element.Constant(1230),
+		Conductivity: element.Constant(1.31),
 		Low:          0 + zeroCelsius,
 		High:         400 + zeroCelsius, // about the upper continuous limit below
 		Limits: []element.Limit{

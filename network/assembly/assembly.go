@@ -24,9 +24,9 @@ type Drive interface {
 // A batch is one group at work.
 type batch struct {
 	element.Batch
-	first, paths int // range in the list of paths
-	deps, stride int // range in the list of dependencies, and how many a path has
-	count        int
+	first, end    int // its paths in the list of paths, end excluded
+	deps, depsEnd int // their dependencies in the list of dependencies
+	stride        int // how many dependencies each of its paths has
 }
 
 // A System is the network as equations. It meets ode.System. Nodes that are not held must come first.
@@ -50,7 +50,7 @@ type System struct {
 	slopes []float64 // by dependency
 	rates  []float64 // by path
 	moving bool      // some signal changes at the latest Jacobian
-	warm   []float64 // v of AddSlopes, widened to all nodes
+	wide   []float64 // v of AddSlopes, widened to all nodes: zero for the held ones
 	values []float64 // Jacobian values with a last slot that catches what has no place
 
 	pattern   *sparse.Pattern
@@ -76,7 +76,7 @@ func New(nodes []element.Node, groups []element.Group, signals int, drive Drive)
 	n := len(nodes)
 	s.state = element.State{T: make([]float64, n), Signal: make([]float64, signals), Rate: make([]float64, signals)}
 	s.net = make([]float64, n+1)
-	s.warm = make([]float64, n)
+	s.wide = make([]float64, n)
 	s.slopes = make([]float64, len(s.dep))
 	s.rates = make([]float64, len(s.Paths))
 	s.values = make([]float64, s.pattern.NNZ()+1)
@@ -107,8 +107,8 @@ func (s *System) addPaths() {
 				s.symmetric = s.symmetric && s.keepsSymmetry(&p)
 			}
 		}
-		b.paths = len(s.Paths)
-		b.count = len(s.dep)
+		b.end = len(s.Paths)
+		b.depsEnd = len(s.dep)
 		s.batches = append(s.batches, b)
 	}
 }
@@ -136,7 +136,7 @@ func (s *System) analyse() {
 	each := func(visit func(k int, row, col int32, first bool)) {
 		for _, b := range s.batches {
 			k := b.deps
-			for p := b.first; p < b.paths; p++ {
+			for p := b.first; p < b.end; p++ {
 				for range b.stride {
 					visit(k, s.a[p], s.dep[k], true)
 					visit(k, s.b[p], s.dep[k], false)

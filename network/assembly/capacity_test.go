@@ -4,6 +4,7 @@ import (
 	"fmt"
 	"math"
 	"math/rand/v2"
+	"slices"
 	"testing"
 
 	"workheat/network/assembly"
@@ -37,7 +38,7 @@ func TestTemperatureAndEnergyAreInverse(t *testing.T) {
 			s := lump(c, start)
 			for _, temp := range places(c) {
 				u := s.Energy(0, temp)
-				tol := 1e-12*temp + 1e-15*math.Abs(c.Integral(temp))/c.Least()
+				tol := 1e-12*temp + 1e-15*math.Abs(c.Integral(temp))/slices.Min(c.Y)
 				if d := s.Temperature(0, u) - temp; math.Abs(d) > tol {
 					t.Errorf("%s from %g K: temperature of the energy at %.17g K is off by %g K", name, start, temp, d)
 				}

@@ -15,7 +15,7 @@ func (s *System) Rates(f, q []float64, t float64, y []float64) {
 	s.place(t, y)
 	for i := range s.batches {
 		b := &s.batches[i]
-		b.Flows(q[b.first:b.paths], &s.state)
+		b.Flows(q[b.first:b.end], &s.state)
 	}
 	net := s.net
 	for i := range net {
@@ -46,7 +46,7 @@ func (s *System) Jacobian(a, d, ft []float64, t float64, y []float64) {
 	s.caps.scales(d, y)
 	for i := range s.batches {
 		b := &s.batches[i]
-		b.Slopes(s.slopes[b.deps:b.count], s.rates[b.first:b.paths], &s.state)
+		b.Slopes(s.slopes[b.deps:b.depsEnd], s.rates[b.first:b.end], &s.state)
 	}
 	s.addHeldRates()
 	v := s.values
@@ -67,7 +67,7 @@ func (s *System) addHeldRates() {
 	for i := range s.batches {
 		b := &s.batches[i]
 		k := b.deps
-		for p := b.first; p < b.paths; p++ {
+		for p := b.first; p < b.end; p++ {
 			for range b.stride {
 				if j := int(s.dep[k]); j >= s.states {
 					s.rates[p] += s.slopes[k] * s.state.Rate[s.Nodes[j].Signal]
@@ -106,7 +106,7 @@ func (s *System) timeSlopes(ft []float64) {
 
 // AddSlopes adds the slopes of the flows along a change v of the temperatures, and c times their rates.
 func (s *System) AddSlopes(dq []float64, h float64, v []float64, c float64) {
-	copy(s.warm, v)
+	copy(s.wide, v)
 	for i := range s.batches {
 		b := &s.batches[i]
 		if b.stride == 2 {
@@ -114,10 +114,10 @@ func (s *System) AddSlopes(dq []float64, h float64, v []float64, c float64) {
 			continue
 		}
 		k := b.deps
-		for p := b.first; p < b.paths; p++ {
+		for p := b.first; p < b.end; p++ {
 			sum := 0.0
 			for range b.stride {
-				sum += s.slopes[k] * s.warm[s.dep[k]]
+				sum += s.slopes[k] * s.wide[s.dep[k]]
 				k++
 			}
 			dq[p] += h * sum
@@ -132,10 +132,10 @@ func (s *System) AddSlopes(dq []float64, h float64, v []float64, c float64) {
 
 // addPairs is the common case of AddSlopes: each flow depends on two temperatures.
 func (s *System) addPairs(dq []float64, h float64, b *batch) {
-	slopes, dep := s.slopes[b.deps:b.count], s.dep[b.deps:b.count]
-	dq = dq[b.first:b.paths]
+	slopes, dep := s.slopes[b.deps:b.depsEnd], s.dep[b.deps:b.depsEnd]
+	dq = dq[b.first:b.end]
 	for p := range dq {
-		dq[p] += h * (slopes[2*p]*s.warm[dep[2*p]] + slopes[2*p+1]*s.warm[dep[2*p+1]])
+		dq[p] += h * (slopes[2*p]*s.wide[dep[2*p]] + slopes[2*p+1]*s.wide[dep[2*p+1]])
 	}
 }
 
@@ -145,7 +145,7 @@ func (s *System) State(t float64, y, flows []float64) *element.State {
 	s.place(t, y)
 	for i := range s.batches {
 		if b := &s.batches[i]; flows != nil {
-			b.Flows(flows[b.first:b.paths], &s.state)
+			b.Flows(flows[b.first:b.end], &s.state)
 		}
 	}
 	return &s.state
@@ -185,13 +185,13 @@ func (s *System) PathSlopes(t float64, y []float64) (dep [][]float64, rate []flo
 	s.place(t, y)
 	for i := range s.batches {
 		b := &s.batches[i]
-		b.Slopes(s.slopes[b.deps:b.count], s.rates[b.first:b.paths], &s.state)
+		b.Slopes(s.slopes[b.deps:b.depsEnd], s.rates[b.first:b.end], &s.state)
 	}
 	s.addHeldRates()
 	dep = make([][]float64, 0, len(s.Paths))
 	for i := range s.batches {
 		b := &s.batches[i]
-		for p := b.first; p < b.paths; p++ {
+		for p := b.first; p < b.end; p++ {
 			k := b.deps + (p-b.first)*b.stride
 			dep = append(dep, s.slopes[k:k+b.stride])
 		}

@@ -5,7 +5,7 @@
 package diag
 
 import (
-	"fmt"
+	"errors"
 	"sort"
 )
 
@@ -82,11 +82,6 @@ func (l *List) At(at Span, text, help string) {
 	l.Add(Problem{At: at, Text: text, Help: help})
 }
 
-// Atf is [List.At] with a formatted text and no cure.
-func (l *List) Atf(at Span, format string, args ...any) {
-	l.Add(Problem{At: at, Text: fmt.Sprintf(format, args...)})
-}
-
 // Warn adds a warning; help may be empty.
 func (l *List) Warn(at Span, text, help string) {
 	l.Add(Problem{At: at, Text: text, Help: help, Warning: true})
@@ -104,6 +99,17 @@ func (l *List) Problems() []Problem {
 	out := append([]Problem(nil), l.problems...)
 	sort.SliceStable(out, func(i, j int) bool { return before(&out[i], &out[j]) })
 	return out
+}
+
+// Reason returns the innermost text of an error, which names no folder of the machine.
+func Reason(err error) string {
+	for {
+		inner := errors.Unwrap(err)
+		if inner == nil {
+			return err.Error()
+		}
+		err = inner
+	}
 }
 
 func before(a, b *Problem) bool {

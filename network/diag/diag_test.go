@@ -152,7 +152,7 @@ func TestList(t *testing.T) {
 	l.At(a.Span(3, 4), "x", "")
 	l.At(a.Span(3, 4), "a", "h")
 	l.At(a.Span(3, 4), "a", "another cure of the same")
-	l.Atf(a.Span(1, 9), "%s%d", "z", 1)
+	l.At(a.Span(1, 9), "z1", "")
 	l.At(a.Span(1, 2), "z", "")
 	l.At(Span{}, "nowhere", "")
 	var got []string

@@ -99,9 +99,7 @@ func (c *checker) rounds(p *Phase) {
 // same reports whether two speeds are one but for the digits of their text.
 func same(a, b float64) bool { return math.Abs(a-b) <= 1e-6*math.Max(1, math.Max(a, b)) }
 
-func show(v float64) string { return kmh.Format(v, 5) }
-
-var kmh = unit.NewWant("speed", "km/h")
+func show(v float64) string { return unit.RoadSpeed.Format(v, 5) }
 
 // phase checks one phase and sets the speed at its end.
 func (c *checker) phase(p *Phase) {
@@ -141,17 +139,6 @@ func (c *checker) phase(p *Phase) {
 		c.speed = p.Trace.Y[len(p.Trace.Y)-1]
 	}
 	c.time(p, from)
-}
-
-// begins returns the speed at which a phase says that it begins, or None.
-func (p *Phase) begins() float64 {
-	switch p.Verb {
-	case Brake, SpeedUp:
-		return p.From
-	case Hold:
-		return p.Speed
-	}
-	return None
 }
 
 // pass goes over a phase with a fault of its own.
@@ -212,12 +199,8 @@ func (c *checker) brake(p *Phase) {
 
 // tooWeak reports whether a braking torque cannot slow the vehicle down from a speed.
 func (c *checker) tooWeak(p *Phase, from float64) bool {
-	if !Given(from) || !Given(c.program.Vehicle.Wheel) {
-		return false
-	}
-	m := road(c.program.Vehicle, p.Grade)
-	_, ok := newCoast(&m, p.Torque/c.program.Vehicle.Wheel, from).time(p.To)
-	return !ok
+	known := Given(from) && Given(c.program.Vehicle.Wheel)
+	return known && !Given(p.coasting(c.program.Vehicle, from))
 }
 
 func (c *checker) speedUp(p *Phase) {

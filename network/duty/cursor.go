@@ -1,7 +1,5 @@
 package duty
 
-import "math"
-
 // A Cursor walks through a program leg by leg; since a leg may end early at a temperature, each next leg
 // is planned from where the last one really ended.
 type Cursor struct {
@@ -30,26 +28,10 @@ func NewCursor(p *Program) *Cursor {
 	return c
 }
 
-// startSpeed returns the speed at which a duty begins: what its first phase says.
+// startSpeed returns the speed [m/s] at which a duty begins: what its first phase says, or else standstill.
 func startSpeed(phases []Phase) float64 {
-	if len(phases) == 0 {
-		return 0
-	}
-	switch p := &phases[0]; p.Verb {
-	case Repeat:
-		return startSpeed(p.Phases)
-	case Brake, SpeedUp:
-		if Given(p.From) {
-			return p.From
-		}
-	case Hold:
-		if Given(p.Speed) {
-			return p.Speed
-		}
-	case Follow:
-		if p.Trace != nil {
-			return p.Trace.Y[0]
-		}
+	if p := firstPhase(phases); p != nil && Given(p.begins()) {
+		return p.begins()
 	}
 	return 0
 }
@@ -145,8 +127,8 @@ func (c *Cursor) fill(p *Phase, end float64) {
 func (c *Cursor) plan(p *Phase) {
 	l := c.begin(p.Label)
 	l.Until, l.phase = p.Until, p
-	duration, acceleration := c.shape(p)
-	l.End = c.time + duration
+	length := p.length(c.program.Vehicle, c.speed)
+	l.End, l.Longest = c.time+length, p.Until != nil && length == p.AtMost
 	if c.program.Vehicle == nil {
 		return
 	}
@@ -160,35 +142,21 @@ func (c *Cursor) plan(p *Phase) {
 		base.braked = true
 		l.Motions = append(l.Motions, base)
 	default:
-		l.Motions = ramp(l.Motions, base, c.time, l.End, c.speed, acceleration)
+		l.Motions = ramp(l.Motions, base, c.time, l.End, c.speed, c.acceleration(p))
 	}
 }
 
-// shape returns how long a phase takes at most from the present speed, and its acceleration.
-func (c *Cursor) shape(p *Phase) (duration, acceleration float64) {
-	switch p.Verb {
-	case Brake:
-		if Given(p.Torque) {
-			base := road(c.program.Vehicle, p.Grade)
-			duration, _ = newCoast(&base, p.Torque/c.program.Vehicle.Wheel, c.speed).time(p.To)
-			return duration, 0
-		}
-		return (c.speed - p.To) / p.Deceleration, -p.Deceleration
-	case SpeedUp:
-		if Given(p.In) {
-			return p.In, (p.To - c.speed) / p.In
-		}
-		return (p.To - c.speed) / p.Acceleration, p.Acceleration
-	case Follow:
-		return p.Trace.X[len(p.Trace.X)-1] - p.Trace.X[0], 0
+// acceleration returns the acceleration [m/s^2] of a phase from the present speed.
+func (c *Cursor) acceleration(p *Phase) float64 {
+	switch {
+	case p.Verb == Brake:
+		return -p.Deceleration
+	case p.Verb == SpeedUp && Given(p.In):
+		return (p.To - c.speed) / p.In
+	case p.Verb == SpeedUp:
+		return p.Acceleration
 	}
-	duration = math.Inf(1)
-	for _, t := range [...]float64{p.For, p.AtMost, p.Over / c.speed} {
-		if Given(t) {
-			duration = math.Min(duration, t)
-		}
-	}
-	return duration, 0
+	return 0
 }
 
 // follow appends the ramps of a trace.

@@ -7,19 +7,13 @@ import (
 	"workheat/network/element"
 )
 
-// blank is a phase in which nothing was given.
-func blank(verb Verb, label string) Phase {
-	return Phase{Verb: verb, Label: label, From: None, To: None, Deceleration: None, Torque: None, Acceleration: None, In: None,
-		Speed: None, Grade: None, For: None, Over: None, AtMost: None, Every: None}
-}
-
 func with(p Phase, set func(p *Phase)) Phase {
 	set(&p)
 	return p
 }
 
 func rest(label string, s float64) Phase {
-	return with(blank(Rest, label), func(p *Phase) { p.For = s })
+	return with(Blank(Rest, label), func(p *Phase) { p.For = s })
 }
 
 // A stop is a leg as the cursor gave it.
@@ -62,9 +56,9 @@ func compare(t *testing.T, got, want []stop) {
 
 // A repeat with an interval fills each round up, the last one too; nested repeats count their own rounds.
 func TestRepeats(t *testing.T) {
-	inner := with(blank(Repeat, "1.2"), func(p *Phase) { p.Count = 2; p.Phases = []Phase{rest("b", 1)} })
+	inner := with(Blank(Repeat, "1.2"), func(p *Phase) { p.Count = 2; p.Phases = []Phase{rest("b", 1)} })
 	p := &Program{Phases: []Phase{
-		with(blank(Repeat, "1"), func(p *Phase) { p.Count, p.Every = 2, 10; p.Phases = []Phase{rest("a", 3), inner} }), rest("z", 5)}}
+		with(Blank(Repeat, "1"), func(p *Phase) { p.Count, p.Every = 2, 10; p.Phases = []Phase{rest("a", 3), inner} }), rest("z", 5)}}
 	compare(t, walk(p, planned), []stop{
 		{"a", 0, 3, 1, 0}, {"b", 3, 4, 1, 0}, {"b", 4, 5, 2, 0}, {"1, rest of the interval", 5, 10, 1, 0},
 		{"a", 10, 13, 2, 0}, {"b", 13, 14, 1, 0}, {"b", 14, 15, 2, 0}, {"1, rest of the interval", 15, 20, 2, 0},
@@ -73,7 +67,7 @@ func TestRepeats(t *testing.T) {
 
 // A round that takes longer than its interval makes the next one late, and says so once.
 func TestLateRounds(t *testing.T) {
-	p := &Program{Phases: []Phase{with(blank(Repeat, "1"), func(p *Phase) { p.Count, p.Every = 3, 10; p.Phases = []Phase{rest("a", 4)} }), rest("z", 1)}}
+	p := &Program{Phases: []Phase{with(Blank(Repeat, "1"), func(p *Phase) { p.Count, p.Every = 3, 10; p.Phases = []Phase{rest("a", 4)} }), rest("z", 1)}}
 	long := map[float64]float64{10: 23} // the second round ends at 23 s
 	end := func(l *Leg) float64 {
 		if x, ok := long[l.Start]; ok && l.Label == "a" {
@@ -88,7 +82,7 @@ func TestLateRounds(t *testing.T) {
 
 // A round as long as its interval, but for rounding, is neither filled nor late.
 func TestRoundsThatFit(t *testing.T) {
-	p := &Program{Phases: []Phase{with(blank(Repeat, "1"), func(p *Phase) { p.Count, p.Every = 3, 0.3; p.Phases = []Phase{rest("a", 0.1), rest("b", 0.2)} })}}
+	p := &Program{Phases: []Phase{with(Blank(Repeat, "1"), func(p *Phase) { p.Count, p.Every = 3, 0.3; p.Phases = []Phase{rest("a", 0.1), rest("b", 0.2)} })}}
 	list := walk(p, planned)
 	if len(list) != 6 {
 		t.Errorf("got %d legs, want 6: %v", len(list), list)
@@ -104,9 +98,9 @@ func TestRoundsThatFit(t *testing.T) {
 func TestEarlyEnd(t *testing.T) {
 	until := &Until{Node: 0, Falls: true, Temperature: 400}
 	p := &Program{Vehicle: &car, Phases: []Phase{
-		with(blank(SpeedUp, "up"), func(p *Phase) { p.From, p.To, p.In = 0, 20, 10 }),
-		with(blank(Hold, "hold"), func(p *Phase) { p.Speed, p.AtMost, p.Until = 20, 100, until }),
-		with(blank(Brake, "brake"), func(p *Phase) { p.To, p.Deceleration = 0, 4 }),
+		with(Blank(SpeedUp, "up"), func(p *Phase) { p.From, p.To, p.In = 0, 20, 10 }),
+		with(Blank(Hold, "hold"), func(p *Phase) { p.Speed, p.AtMost, p.Until = 20, 100, until }),
+		with(Blank(Brake, "brake"), func(p *Phase) { p.To, p.Deceleration = 0, 4 }),
 	}}
 	c := NewCursor(p)
 	l, _ := c.Next()
@@ -130,11 +124,11 @@ func TestEarlyEnd(t *testing.T) {
 
 // Speeds at the ends of phases are those that were asked for, to the last bit.
 func TestSpeedsAreFreeOfRounding(t *testing.T) {
-	p := &Program{Vehicle: &car, Phases: []Phase{with(blank(Repeat, "1"), func(p *Phase) {
+	p := &Program{Vehicle: &car, Phases: []Phase{with(Blank(Repeat, "1"), func(p *Phase) {
 		p.Count = 50
 		p.Phases = []Phase{
-			with(blank(SpeedUp, "up"), func(p *Phase) { p.To, p.Acceleration = 110/3.6, 1.7 }),
-			with(blank(Brake, "down"), func(p *Phase) { p.To, p.Deceleration = 0, 3.3 })}
+			with(Blank(SpeedUp, "up"), func(p *Phase) { p.To, p.Acceleration = 110/3.6, 1.7 }),
+			with(Blank(Brake, "down"), func(p *Phase) { p.To, p.Deceleration = 0, 3.3 })}
 	})}}
 	c := NewCursor(p)
 	for {
@@ -158,14 +152,14 @@ func TestLengths(t *testing.T) {
 		speed float64
 		want  float64
 	}{
-		{"brake", with(blank(Brake, ""), func(p *Phase) { p.To, p.Deceleration = 10, 4 }), 30, 5},
-		{"brake by torque, no air", with(blank(Brake, ""), func(p *Phase) { p.To, p.Torque = 10, 0.3*1500*1.05*2 }), 30, 20 / (2 + 0.011*9.80665/1.05)},
-		{"speed up", with(blank(SpeedUp, ""), func(p *Phase) { p.To, p.Acceleration = 30, 2 }), 10, 10},
-		{"speed up in", with(blank(SpeedUp, ""), func(p *Phase) { p.To, p.In = 30, 7 }), 10, 7},
-		{"hold over", with(blank(Hold, ""), func(p *Phase) { p.Over = 600 }), 30, 20},
-		{"hold over or for", with(blank(Hold, ""), func(p *Phase) { p.Over, p.For, p.AtMost = 600, 50, 15 }), 30, 15},
+		{"brake", with(Blank(Brake, ""), func(p *Phase) { p.To, p.Deceleration = 10, 4 }), 30, 5},
+		{"brake by torque, no air", with(Blank(Brake, ""), func(p *Phase) { p.To, p.Torque = 10, 0.3*1500*1.05*2 }), 30, 20 / (2 + 0.011*9.80665/1.05)},
+		{"speed up", with(Blank(SpeedUp, ""), func(p *Phase) { p.To, p.Acceleration = 30, 2 }), 10, 10},
+		{"speed up in", with(Blank(SpeedUp, ""), func(p *Phase) { p.To, p.In = 30, 7 }), 10, 7},
+		{"hold over", with(Blank(Hold, ""), func(p *Phase) { p.Over = 600 }), 30, 20},
+		{"hold over or for", with(Blank(Hold, ""), func(p *Phase) { p.Over, p.For, p.AtMost = 600, 50, 15 }), 30, 15},
 		{"rest", rest("", 9), 0, 9},
-		{"follow", with(blank(Follow, ""), func(p *Phase) { p.Trace = trace }), 0, 7},
+		{"follow", with(Blank(Follow, ""), func(p *Phase) { p.Trace = trace }), 0, 7},
 	} {
 		v := car
 		v.DragArea = 0
@@ -191,12 +185,12 @@ func TestStartSpeed(t *testing.T) {
 	if len(l.Motions) != 0 || l.Speed(1) != 0 {
 		t.Errorf("nothing can move, but %+v", l)
 	}
-	brake := with(blank(Brake, ""), func(p *Phase) { p.From, p.To, p.Deceleration = 25, 0, 5 })
+	brake := with(Blank(Brake, ""), func(p *Phase) { p.From, p.To, p.Deceleration = 25, 0, 5 })
 	for name, phases := range map[string][]Phase{
 		"brake":  {brake},
-		"hold":   {with(blank(Hold, ""), func(p *Phase) { p.Speed, p.For = 25, 3 })},
-		"repeat": {with(blank(Repeat, ""), func(p *Phase) { p.Count = 1; p.Phases = []Phase{brake} })},
-		"follow": {with(blank(Follow, ""), func(p *Phase) { p.Trace = element.MustCurve([]float64{0, 1}, []float64{25, 20}) })},
+		"hold":   {with(Blank(Hold, ""), func(p *Phase) { p.Speed, p.For = 25, 3 })},
+		"repeat": {with(Blank(Repeat, ""), func(p *Phase) { p.Count = 1; p.Phases = []Phase{brake} })},
+		"follow": {with(Blank(Follow, ""), func(p *Phase) { p.Trace = element.MustCurve([]float64{0, 1}, []float64{25, 20}) })},
 	} {
 		if c := NewCursor(&Program{Vehicle: &car, Phases: phases}); c.speed != 25 {
 			t.Errorf("%s: begins at %g m/s, want 25", name, c.speed)

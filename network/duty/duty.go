@@ -30,16 +30,12 @@ const (
 	Follow              // follow a speed trace
 )
 
-var verbNames = [...]string{"repeat", "brake", "speed up", "hold", "rest", "follow"}
-
-func (v Verb) String() string { return verbNames[v] }
-
 // A Phase is one entry of a duty. Numbers that were not given are None.
 type Phase struct {
 	Verb  Verb
 	Label string // where it stands: "2.1 brake" is the first phase inside the second entry
 	Place int    // for the reader: which place in the file it came from
-	Told  bool   // by the reader: a fault of it was reported; its numbers may be missing
+	Told  bool   // for the reader: a fault of it was reported; its numbers may be missing
 
 	From, To     float64 // m/s
 	Deceleration float64 // m/s^2, positive
@@ -54,16 +50,24 @@ type Phase struct {
 	Until        *Until
 	Trace        *element.Curve // m/s over s, from zero
 
-	Count  int // of a repeat
-	Every  float64
+	Count  int     // of a repeat
+	Every  float64 // s, from the start of a round to that of the next
 	Phases []Phase
+}
+
+// Blank returns a phase in which nothing is given.
+func Blank(verb Verb, label string) Phase {
+	return Phase{
+		Verb: verb, Label: label, From: None, To: None, Deceleration: None, Torque: None, Acceleration: None, In: None,
+		Speed: None, Grade: None, For: None, Over: None, AtMost: None, Every: None,
+	}
 }
 
 // An Until ends a phase when a node's temperature passes a value.
 type Until struct {
 	Node        int
-	Falls       bool // from above; else it rises
-	Temperature float64
+	Falls       bool    // from above; else it rises
+	Temperature float64 // K
 }
 
 // A Program is a whole duty. The vehicle is nil when nothing moves.
@@ -78,6 +82,7 @@ type Leg struct {
 	Start   float64 // s
 	End     float64 // s, at the latest
 	Until   *Until
+	Longest bool     // End is the longest time that the until may wait
 	Motions []Motion // cover Start to End; empty when nothing moves
 	Late    float64  // s by which a repeat's interval had to be lengthened before this leg
 	phase   *Phase
@@ -91,4 +96,56 @@ func (l *Leg) Speed(t float64) float64 {
 		}
 	}
 	return 0
+}
+
+// begins returns the speed at which a phase says that it begins, or None.
+func (p *Phase) begins() float64 {
+	switch p.Verb {
+	case Brake, SpeedUp:
+		return p.From
+	case Hold:
+		return p.Speed
+	case Follow:
+		if p.Trace != nil {
+			return p.Trace.Y[0]
+		}
+	}
+	return None
+}
+
+// length returns how long [s] a phase takes at most from a speed. It is infinite when nothing ends the phase, and
+// None when that cannot be told.
+func (p *Phase) length(v *element.Vehicle, from float64) float64 {
+	switch {
+	case p.Verb == Brake && Given(p.Torque):
+		return p.coasting(v, from)
+	case p.Verb == Brake:
+		return (from - p.To) / p.Deceleration
+	case p.Verb == SpeedUp && Given(p.In):
+		return p.In
+	case p.Verb == SpeedUp:
+		return (p.To - from) / p.Acceleration
+	case p.Verb == Follow:
+		return p.Trace.X[len(p.Trace.X)-1] - p.Trace.X[0]
+	}
+	least := math.Inf(1)
+	for _, t := range [...]float64{p.For, p.AtMost, p.Over / from} {
+		if Given(t) {
+			least = math.Min(least, t)
+		}
+	}
+	return least
+}
+
+// coasting returns how long [s] a braking by torque takes, or None when it cannot be told or never ends.
+func (p *Phase) coasting(v *element.Vehicle, from float64) float64 {
+	if !Given(from) || !(v.Wheel > 0) {
+		return None
+	}
+	m := road(v, p.Grade)
+	t, ok := newCoast(&m, p.Torque/v.Wheel, from).time(p.To)
+	if !ok {
+		return None
+	}
+	return t
 }

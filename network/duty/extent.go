@@ -15,7 +15,7 @@ const (
 
 // time notes how long a phase takes that begins at a speed, and reports one that is out of bounds.
 func (c *checker) time(p *Phase, from float64) {
-	seconds := c.seconds(p, from)
+	seconds := p.length(c.program.Vehicle, from)
 	switch {
 	case math.IsInf(seconds, 0): // it never ends, which is reported
 	case seconds > longest:
@@ -25,34 +25,6 @@ func (c *checker) time(p *Phase, from float64) {
 	case seconds > c.lasts[p.Place]:
 		c.lasts[p.Place] = seconds
 	}
-}
-
-// seconds returns how long a phase takes at most, or None or an infinity when that is not known.
-func (c *checker) seconds(p *Phase, from float64) float64 {
-	switch {
-	case p.Verb == Brake && Given(p.Torque):
-		if c.tooWeak(p, from) || !Given(from) || !(c.program.Vehicle.Wheel > 0) {
-			return None
-		}
-		m := road(c.program.Vehicle, p.Grade)
-		t, _ := newCoast(&m, p.Torque/c.program.Vehicle.Wheel, from).time(p.To)
-		return t
-	case p.Verb == Brake:
-		return (from - p.To) / p.Deceleration
-	case p.Verb == SpeedUp && Given(p.In):
-		return p.In
-	case p.Verb == SpeedUp:
-		return (p.To - from) / p.Acceleration
-	case p.Verb == Follow:
-		return p.Trace.X[len(p.Trace.X)-1] - p.Trace.X[0]
-	}
-	least := None
-	for _, t := range [...]float64{p.For, p.AtMost, p.Over / from} {
-		if Given(t) && !(t >= least) {
-			least = t
-		}
-	}
-	return least
 }
 
 // extent reports where a duty runs through too many phases or takes too long.

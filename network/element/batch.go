@@ -39,9 +39,10 @@ type Batch interface {
 	Recount(path int, s *State) float64
 }
 
-// A Ranger is a batch whose law has a valid range. Outside reports what is outside it at a state, one
-// entry per path that has left the range, or nothing.
+// A Ranger is a batch whose law has a valid range.
 type Ranger interface {
+	// Range calls report once for each path that is outside the range at a state. The text says what is outside,
+	// without place or time, so that equal faults are equal texts.
 	Range(s *State, report func(path int, text string))
 }
 

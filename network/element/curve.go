@@ -98,16 +98,7 @@ func (c *Curve) IsConstant() bool {
 	return true
 }
 
-// Least returns the smallest y.
-func (c *Curve) Least() float64 {
-	least := c.Y[0]
-	for _, y := range c.Y {
-		least = math.Min(least, y)
-	}
-	return least
-}
-
-// Scaled returns the curve whose y is k times this one's.
+// Scaled returns the curve whose y is k times this one's; x is shared.
 func (c *Curve) Scaled(k float64) *Curve {
 	y := make([]float64, len(c.Y))
 	for i := range y {
@@ -116,9 +107,9 @@ func (c *Curve) Scaled(k float64) *Curve {
 	return MustCurve(c.X, y)
 }
 
-// Sample returns a curve through f on [low, high] with corners placed by halving, so that the chord of
-// each piece keeps within tol (relative to f) of f at three points inside it. It serves to turn a published
-// formula into a table once; f must be finite and not zero on the interval.
+// Sample returns corners of a curve through f on [low, high], placed by halving until the chord of each piece
+// keeps within tol (relative to f) of f at three points inside it, or the piece is a two-millionth of the
+// interval. It serves to turn a published formula into a table once; f must be finite and not zero there.
 func Sample(f func(float64) float64, low, high, tol float64) (x, y []float64) {
 	x, y = []float64{low}, []float64{f(low)}
 	var split func(a, b, fa, fb float64, depth int)

@@ -3,6 +3,8 @@ package element
 import (
 	"math"
 	"testing"
+
+	"workheat/network/unit"
 )
 
 func TestCurve(t *testing.T) {
@@ -24,8 +26,8 @@ func TestCurve(t *testing.T) {
 	if d := c.Scaled(2); d.At(5) != 4 || d.Integral(5) != 15 || c.At(5) != 2 {
 		t.Errorf("scaled: %g and %g", d.At(5), d.Integral(5))
 	}
-	if c.Least() != 1 || c.IsConstant() || !Constant(4).IsConstant() || Constant(4).Integral(3) != 12 {
-		t.Error("least, constant")
+	if c.IsConstant() || !Constant(4).IsConstant() || Constant(4).Integral(3) != 12 {
+		t.Error("constant")
 	}
 }
 
@@ -61,8 +63,8 @@ func TestSample(t *testing.T) {
 }
 
 func TestFieldRange(t *testing.T) {
-	f := Field{Key: "x"}.From(0, 1)
-	g := Field{Key: "x"}.Positive()
+	f := Field{Key: "x", Want: unit.Number}.From(0, 1)
+	g := Field{Key: "x", Want: unit.Number}.Positive()
 	for _, k := range []struct {
 		f  Field
 		x  float64

@@ -3,6 +3,8 @@
 package element
 
 import (
+	"math"
+
 	"workheat/network/unit"
 )
 
@@ -20,6 +22,9 @@ const (
 	Bodies       Section = "bodies"
 	Dissipators  Section = "dissipators"
 )
+
+// Sections lists them in the order in which they are shown.
+var Sections = []Section{Conductances, Sources, Bodies, Dissipators}
 
 // A Kind is one sort of element that a netlist may declare. A catalogue is a list of kinds; everything
 // that is known of a kind (what may be written, units, ranges, source) stands here once.
@@ -68,31 +73,29 @@ type Field struct {
 	Type     Type
 	Want     unit.Want // what a Quantity, Number or Signal must be
 	Required bool
-	Default  string // as it would be written; empty: none
-	Min, Max float64
-	Open     bool // Min itself is outside the range
-	Bounded  bool // Min and Max hold
+	Default  string  // as it would be written; empty: none
+	Min, Max float64 // SI
+	Open     bool    // Min itself is outside the range
+	Bounded  bool    // Min and Max hold
 }
 
-// Positive is a required-range helper: values above zero.
+// Positive returns the field limited to values above zero.
 func (f Field) Positive() Field {
-	f.Bounded, f.Open, f.Min, f.Max = true, true, 0, maxFloat
+	f.Bounded, f.Open, f.Min, f.Max = true, true, 0, math.MaxFloat64
 	return f
 }
 
-// From is a range helper: values from low to high, both included.
+// From returns the field limited to values from low to high [SI], both included.
 func (f Field) From(low, high float64) Field {
 	f.Bounded, f.Open, f.Min, f.Max = true, false, low, high
 	return f
 }
 
-// Must marks the field as required.
+// Must returns the field as a required one.
 func (f Field) Must() Field {
 	f.Required = true
 	return f
 }
-
-const maxFloat = 1.797693134862315708145274237317043567981e+308
 
 // A Catalogue is what may be written in a netlist: kinds and materials in the order they are shown.
 type Catalogue struct {
@@ -150,7 +153,7 @@ func (f Field) Outside(x float64) string {
 		low = "above"
 	}
 	text := "\"" + f.Key + "\" must be " + low + " " + f.show(f.Min)
-	if f.Max < maxFloat {
+	if f.Max < math.MaxFloat64 {
 		text += " and at most " + f.show(f.Max)
 	}
 	return text

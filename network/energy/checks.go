@@ -77,10 +77,12 @@ func checkGiven(r *Run) Check {
 	return c
 }
 
-// checkBreaks looks whether every jump or slope break of a table or motion is the end of a step.
-func checkBreaks(r *Run) Check {
+// checkBreaks looks whether every jump or slope break of a table or motion, and every jump of a heat capacity, is
+// the end of a step.
+func checkBreaks(w *witness) Check {
 	c := Check{Layer: 2, Name: "breaks",
-		About: "jumps and slope breaks of tables and motions that are not the end of a step, as a count"}
+		About: "jumps and slope breaks of tables and motions, and jumps of heat capacities, that are not the end of a step, as a count"}
+	r := w.run
 	ends := make([]float64, 0, r.Tape.Steps()+1)
 	for k := 0; k < r.Tape.Steps(); k++ {
 		start, _, _, _ := r.Tape.Step(k)
@@ -111,6 +113,31 @@ func checkBreaks(r *Run) Check {
 			see(x, l.Label)
 		}
 	}
+	for k := range r.Tape.Steps() {
+		w.jumpsWithin(k, func(x float64, node string) {
+			c.Gap++
+			c.Where = fmt.Sprintf("the heat capacity of %s, in the step from %.6g s", node, x)
+		})
+	}
 	c.close()
 	return c
+}
+
+// jumpsWithin calls see for every jump of a heat capacity that step k begins on one side and ends on the other, with
+// the time at which it begins.
+func (w *witness) jumpsWithin(k int, see func(x float64, node string)) {
+	start, _, _, coef := w.run.Tape.Step(k)
+	for i, s := range w.stores {
+		if s == nil || !s.jumpy {
+			continue
+		}
+		n := &w.run.Nodes[i]
+		slack := s.landing(w.run.Abs)
+		first, last := w.run.Tape.Value(coef, n.State, 0)+s.start, w.run.Tape.Value(coef, n.State, 1)+s.start
+		for j, u := range s.h {
+			if s.jumps(j) && min(first, last) < u-slack && max(first, last) > u+slack {
+				see(start, n.Name)
+			}
+		}
+	}
 }

@@ -50,7 +50,9 @@ type PathLine struct {
 	Kind           string
 	From, To       string
 	Net            float64
-	Border, Inside bool // it crosses the border; it links two nodes inside
+	Border, Inside bool    // it crosses the border; it links two nodes inside
+	In             float64 // what it brought in through the border; zero unless it crosses it
+	Work           bool    // it is a dissipator's: work turned into heat
 }
 
 // A DissipatorLine compares the work that a dissipator took with the heat that it gave.

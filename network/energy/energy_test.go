@@ -43,10 +43,15 @@ func TestGaussPoints(t *testing.T) {
 	}
 }
 
-// lump is a run of one node that stores by a table and takes 1 W for 100 s, which a path of known law brings.
-func lump(capacity *element.Curve) *Run {
-	tape := record.NewTape(1, 4)
-	tape.Add(0, 100, 0)[1] = 100
+// lump is a run of one node that stores by a table and takes 1 W for 100 s, which a path of known law brings, in
+// steps that end at the given times.
+func lump(capacity *element.Curve, ends ...float64) *Run {
+	tape, from := record.NewTape(1, 4), 0.0
+	for _, end := range append(ends, 100) {
+		coef := tape.Add(from, end-from, 0)
+		coef[0], coef[1] = from, end-from
+		from = end
+	}
 	same := newStore(capacity, 300)
 	return &Run{
 		Nodes: []Node{{Name: "lump", Capacity: capacity, Start: 300, EndState: 100, Reported: same.temperature,
@@ -65,7 +70,7 @@ func lump(capacity *element.Curve) *Run {
 // The account of one heated lump, by hand; then the same with single numbers wrong, each seen by its check.
 func TestAccountByHand(t *testing.T) {
 	capacity := element.MustCurve([]float64{300, 310, 310, 400}, []float64{2, 4, 9, 9})
-	b := Make(lump(capacity))
+	b := Make(lump(capacity, 30)) // at 30 J the capacity jumps
 	if !b.Closed {
 		t.Errorf("a sound account does not close: %+v", b.Checks)
 	}
@@ -96,10 +101,11 @@ func TestAccountByHand(t *testing.T) {
 			r.Matrix = func([]float64) ([]float64, []float64) { return []float64{1e-3}, []float64{0} }
 		}, "matrix"},
 		{"a break within a step", func(r *Run) { r.Legs = []Leg{{Label: "l", End: 100, Node: -1, Corners: []float64{40}}} }, "breaks"},
+		{"a jump of a heat capacity within a step", func(r *Run) { r.Tape = lump(capacity, 29).Tape }, "breaks"},
 		{"a phase that ended late", func(r *Run) { r.Legs = []Leg{{Label: "l", End: 100, Node: 0, Target: 305, Ended: true}} }, "ends"},
 		{"a phase that ended early", func(r *Run) { r.Legs = []Leg{{Label: "l", End: 100, Node: 0, Target: 350, Ended: true}} }, "ends"},
 	} {
-		r := lump(capacity)
+		r := lump(capacity, 30)
 		c.set(r)
 		b := Make(r)
 		seen := false

@@ -104,7 +104,7 @@ func Make(r *Run) *Book {
 	if r.Vehicle != nil {
 		b.Checks = append(b.Checks, w.checkVehicle())
 	}
-	b.Checks = append(b.Checks, s.checkSlopes(w, c), s.checkMatrix(w), checkBreaks(r), checkEnds(r))
+	b.Checks = append(b.Checks, s.checkSlopes(w, c), s.checkMatrix(w), checkBreaks(w), checkEnds(r))
 	b.verdict()
 	return b
 }

@@ -46,14 +46,13 @@ func (b *Book) ledger(r *Run, c *count, s *survey) {
 // less than that passed it, within the network.
 func (b *Book) scale(s *survey) float64 { return math.Max(b.Throughput, s.swing) }
 
-// addPath books one path's total. Its part of the throughput is the same without sign, or, when the flow
-// went to and fro, what the recount found of it.
+// addPath books one path's total.
 func (b *Book) addPath(r *Run, p Path, y *tally) {
 	if p.Meter {
 		b.dissipator(p.Element).Work += p.Total
 		return
 	}
-	line := PathLine{Element: p.Element, Path: p.Path, Kind: p.Kind, Net: p.Total}
+	line := PathLine{Element: p.Element, Path: p.Path, Kind: p.Kind, Net: p.Total, Work: p.Section == element.Dissipators}
 	fromOut, toOut := b.border(p.From), b.border(p.To)
 	if p.From != element.Outside {
 		line.From = r.Nodes[p.From].Name
@@ -64,29 +63,34 @@ func (b *Book) addPath(r *Run, p Path, y *tally) {
 		b.Nodes[p.To].Net += p.Total
 	}
 	line.Border, line.Inside = fromOut != toOut, !fromOut && !toOut
-	b.Paths = append(b.Paths, line)
-	if p.Section == element.Dissipators {
+	if line.Border {
+		line.In = p.Total
+		if toOut {
+			line.In = -p.Total
+		}
+		b.through(&line, y)
+	}
+	if line.Work {
 		b.dissipator(p.Element).Heat += p.Total
 	}
-	if !line.Border {
-		return
-	}
-	in := p.Total // into the network
-	if toOut {
-		in = -in
-	}
+	b.Paths = append(b.Paths, line)
+}
+
+// through adds a path across the border to the totals. Its part of the throughput is its total without sign, or,
+// when the flow went to and fro, what the recount found of it.
+func (b *Book) through(line *PathLine, y *tally) {
 	if y.forth && y.reverse {
-		b.Throughput += math.Max(abs(in), y.size)
+		b.Throughput += math.Max(abs(line.In), y.size)
 	} else {
-		b.Throughput += abs(in)
+		b.Throughput += abs(line.In)
 	}
 	switch {
-	case p.Section == element.Dissipators:
-		b.WorkIn += in
-	case in > 0:
-		b.HeatIn += in
+	case line.Work:
+		b.WorkIn += line.In
+	case line.In > 0:
+		b.HeatIn += line.In
 	default:
-		b.HeatOut -= in
+		b.HeatOut -= line.In
 	}
 }
 

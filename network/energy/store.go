@@ -1,6 +1,7 @@
 package energy
 
 import (
+	"slices"
 	"sort"
 
 	"workheat/network/element"
@@ -12,6 +13,7 @@ type store struct {
 	x, c  []float64 // corners: K, J/K
 	h     []float64 // J from the first corner
 	start float64   // J from the first corner to the start temperature
+	jumpy bool      // it jumps somewhere
 }
 
 func newStore(c *element.Curve, start float64) *store {
@@ -21,6 +23,9 @@ func newStore(c *element.Curve, start float64) *store {
 		s.h[i] = s.h[i-1] + (s.x[i]-s.x[i-1])*low + (s.x[i]-s.x[i-1])*(high-low)/2
 	}
 	s.start = s.enthalpy(start)
+	for k := range s.x {
+		s.jumpy = s.jumpy || s.jumps(k)
+	}
 	return s
 }
 
@@ -82,6 +87,14 @@ func (s *store) kink(k int, moved float64) float64 {
 	}
 	return atBreak * abs(s.slope(k)-s.slope(k-1)) * moved / (c * c * c)
 }
+
+// jumps reports whether the capacity jumps at corner k by a hundredth or more: such a place ends a step.
+func (s *store) jumps(k int) bool {
+	return k+1 < len(s.x) && s.x[k+1] == s.x[k] && abs(s.c[k+1]-s.c[k]) > 0.01*min(s.c[k], s.c[k+1])
+}
+
+// landing returns how far [J] a step that ends at a jump may end from it, with the accuracy [K] of its landing.
+func (s *store) landing(accuracy float64) float64 { return 2 * accuracy * slices.Min(s.c) }
 
 // slope returns the slope of the piece from corner k on; zero outside the corners and at a jump.
 func (s *store) slope(k int) float64 {

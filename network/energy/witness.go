@@ -85,6 +85,9 @@ func (w *witness) split(coef []float64, h float64) []float64 {
 			b := float64(j) / looks
 			yb := tape.Value(coef, n, b) + s.start
 			for k := sort.SearchFloat64s(s.h, min(ya, yb)); k < len(s.h) && s.h[k] < max(ya, yb); k++ {
+				if u := s.h[k] - s.start; min(abs(u-first), abs(u-first-moved)) <= s.landing(w.run.Abs) {
+					continue // the step begins or ends there
+				}
 				bend := h * w.stiff[i] * abs(moved) * s.kink(k, abs(moved))
 				w.bends += bend
 				if bend <= w.slight {

@@ -19,31 +19,37 @@ type Outcome = outcome.Run
 // A Writer writes an outcome in one format.
 type Writer struct {
 	Suffix string // of the file name, with its dot, in lower case
-	About  string // what is in such a file, one line
 	Write  func(w io.Writer, o *Outcome) error
 }
 
 // Writers lists all formats.
 var Writers = []Writer{
-	{".csv", "samples of all temperatures, heat flows and the vehicle, units in the first row", csv.Write},
-	{".xlsx", "summary, native chart, samples, energy book and inputs as a spreadsheet", xlsx.Write},
-	{".png", "temperatures against time with limits and phases, as a picture", plot.PNG},
-	{".svg", "the same picture as a drawing that scales", plot.SVG},
+	{".csv", csv.Write},
+	{".xlsx", xlsx.Write},
+	{".png", plot.PNG},
+	{".svg", plot.SVG},
 }
 
 // ForFile returns the writer for a file name by its suffix, capitals or not. The error lists the known ones.
 func ForFile(name string) (*Writer, error) {
 	suffix := strings.ToLower(filepath.Ext(name))
-	known := make([]string, len(Writers))
 	for i := range Writers {
 		if Writers[i].Suffix == suffix {
 			return &Writers[i], nil
 		}
-		known[i] = Writers[i].Suffix
 	}
-	list := strings.Join(known[:len(known)-1], ", ") + " or " + known[len(known)-1]
 	if suffix == "" {
-		return nil, fmt.Errorf("the name %q does not say what to write: end it in %s", name, list)
+		return nil, fmt.Errorf("the name %q does not say what to write: end it in %s", name, Suffixes())
 	}
-	return nil, fmt.Errorf("no writer for %q in %q: end the name in %s", suffix, name, list)
+	return nil, fmt.Errorf("no writer for %q in %q: end the name in %s", suffix, name, Suffixes())
+}
+
+// Suffixes lists the known suffixes in words: ".csv, .xlsx or .png".
+func Suffixes() string {
+	known := make([]string, len(Writers))
+	for i, w := range Writers {
+		known[i] = w.Suffix
+	}
+	last := len(known) - 1
+	return strings.Join(known[:last], ", ") + " or " + known[last]
 }

@@ -10,6 +10,10 @@ import (
 // Most is the largest number of states for which Constants computes; the cost grows with its third power.
 const Most = 600
 
+// still is the share of the fastest rate below which a rate is round-off: eigenvalues are found to round-off of the
+// largest.
+const still = 1e-10
+
 // Constants returns the slowest and the fastest time constant [s] of
 //
 //	C dT/dt = A T
@@ -53,7 +57,7 @@ func Constants(capacity []float64, a func(i, j int) float64) (slowest, fastest f
 		rate := -real(v)
 		slowRate, fastRate = math.Min(slowRate, rate), math.Max(fastRate, rate)
 	}
-	if slowRate < 1e-10*fastRate {
+	if slowRate < still*fastRate {
 		slowRate = 0
 	}
 	return 1 / slowRate, 1 / fastRate, true

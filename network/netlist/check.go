@@ -121,7 +121,7 @@ func (r *reader) doubtful() {
 	for _, d := range r.doubts {
 		if !seen[d.of] {
 			seen[d.of] = true
-			r.list.Warn(d.at, fmt.Sprintf("the data of %s are indicative: %s", d.of.Name, d.of.Doubtful), "give measured data if the margin is small")
+			r.list.Warn(d.at, fmt.Sprintf("the data of %s are indicative; its entry in the catalogue says why", d.of.Name), "give measured data if the margin is small")
 		}
 	}
 }

@@ -80,7 +80,7 @@ func (r *reader) group() {
 
 // declare reads one element. It is good when nothing is wrong with it.
 func (r *reader) declare(section element.Section, m *member) (e declared, good bool) {
-	e = declared{section: section, name: m.key, at: r.keySpan(m), value: &m.value}
+	e = declared{name: m.key, at: r.keySpan(m), value: &m.value}
 	r.named(m, "an element")
 	placed := len(r.links)
 	defer func() {
@@ -153,8 +153,6 @@ func (r *reader) declaration(e *declared) *element.Declaration {
 	}
 }
 
-var sections = []element.Section{element.Conductances, element.Sources, element.Bodies, element.Dissipators}
-
 // kind finds the kind of an element. One that was nearly named is found as well, but not ok.
 func (r *reader) kind(section element.Section, o object, at diag.Span) (*element.Kind, bool) {
 	names := r.cat.Names(section)
@@ -170,7 +168,7 @@ func (r *reader) kind(section element.Section, o object, at diag.Span) (*element
 	if k := r.cat.Find(section, v.text); k != nil {
 		return k, true
 	}
-	for _, other := range sections {
+	for _, other := range element.Sections {
 		if k := r.cat.Find(other, v.text); k != nil {
 			r.list.At(r.span(v), fmt.Sprintf("the kind %s does not stand in %s", quote(v.text), section), "move this element to "+quote(string(other)))
 			return nil, false

@@ -7,6 +7,7 @@ import (
 	"os"
 	"path/filepath"
 	"runtime"
+	"slices"
 	"testing"
 	"time"
 
@@ -101,7 +102,7 @@ func sound(t *testing.T, n *netlist.Netlist) {
 	}
 	for _, node := range n.Nodes {
 		finite("start of "+node.Name, node.Start)
-		if node.Capacity != nil && !(node.Capacity.Least() > 0) {
+		if node.Capacity != nil && !(slices.Min(node.Capacity.Y) > 0) {
 			t.Errorf("the capacity of %q", node.Name)
 		}
 	}

@@ -3,6 +3,7 @@ package netlist
 import (
 	"fmt"
 	"math"
+	"slices"
 
 	"workheat/network/diag"
 	"workheat/network/duty"
@@ -100,7 +101,7 @@ func (r *reader) form(o object, d *nodeDraft) {
 	for i := range members {
 		m := &members[i]
 		switch {
-		case m.twice || !contains(ways, m.key):
+		case m.twice || !slices.Contains(ways, m.key):
 		case m.key == "massless" && m.value.kind != 't':
 			r.list.At(r.span(&m.value), `"massless" can only be true`, "remove the key if the node has a mass or is held")
 			if way == nil && len(members) == 1 {

@@ -2,6 +2,7 @@ package netlist
 
 import (
 	"fmt"
+	"slices"
 	"strings"
 	"unicode"
 
@@ -70,14 +71,14 @@ func (r *reader) unknownKeys(members []member, what string, known []string) {
 	var given []string // the known keys that are there, looked up when needed
 	for i := range members {
 		m := &members[i]
-		if m.twice || m.key == "about" || contains(known, m.key) || r.full() {
+		if m.twice || m.key == "about" || slices.Contains(known, m.key) || r.full() {
 			continue
 		}
 		if given == nil {
 			given = among(members, known)
 		}
 		near, help := r.suggest(m.key, known)
-		if near != "" && contains(given, near) {
+		if near != "" && slices.Contains(given, near) {
 			near, help = "", quote(near)+" is given already: remove this one"
 		}
 		r.list.At(r.keySpan(m), fmt.Sprintf("the key %s is not known in %s", quote(m.key), what), help)
@@ -92,7 +93,7 @@ func (r *reader) unknownKeys(members []member, what string, known []string) {
 func among(members []member, list []string) []string {
 	given := make([]string, 0, len(list))
 	for i := range members {
-		if key := members[i].key; contains(list, key) && !contains(given, key) {
+		if key := members[i].key; slices.Contains(list, key) && !slices.Contains(given, key) {
 			given = append(given, key)
 		}
 	}
@@ -146,20 +147,11 @@ func (r *reader) about(m *member, free bool) {
 	r.list.At(r.span(&m.value), `"about" is `+kindNames[m.value.kind]+", but text is due", help)
 }
 
-func contains(list []string, s string) bool {
-	for _, x := range list {
-		if x == s {
-			return true
-		}
-	}
-	return false
-}
-
 // named checks the name of an entry: it will stand in tables and files.
 func (r *reader) named(m *member, what string) {
 	key := value{kind: '"', start: m.start, end: m.end}
 	if strings.TrimSpace(m.key) == "" {
-		r.list.At(r.keySpan(m), "the name of "+what+" is empty", "results, sweeps and fits address it by its name")
+		r.list.At(r.keySpan(m), "the name of "+what+" is empty", "results show it by its name")
 		return
 	}
 	if strings.TrimSpace(m.key) != m.key {

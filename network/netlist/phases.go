@@ -17,7 +17,7 @@ type verb struct {
 	keys []string
 }
 
-// verbs lists the phases but for the repeat.
+// verbs has one row for each phase but the repeat.
 var verbs = []verb{
 	{"brake", duty.Brake, []string{"from", "to", "deceleration", "torque", "grade"}},
 	{"speed up", duty.SpeedUp, []string{"from", "to", "acceleration", "in", "grade"}},
@@ -26,7 +26,14 @@ var verbs = []verb{
 	{"follow", duty.Follow, []string{"file", "time", "speed", "grade", "table"}},
 }
 
-var phaseKeys = []string{"brake", "speed up", "hold", "rest", "follow", "repeat"}
+// phaseKeys are the verbs, the repeat last.
+var phaseKeys = func() []string {
+	var keys []string
+	for _, v := range verbs {
+		keys = append(keys, v.name)
+	}
+	return append(keys, "repeat")
+}()
 
 // A phasePlace is where a phase stands.
 type phasePlace struct {
@@ -83,11 +90,8 @@ func (r *reader) phaseList(v *value, label string) []duty.Phase {
 
 // phase reads one phase. One with a fault is marked as told.
 func (r *reader) phase(v *value, label string) duty.Phase {
-	none := duty.None
-	p := duty.Phase{
-		Label: label, From: none, To: none, Deceleration: none, Torque: none, Acceleration: none, In: none,
-		Speed: none, Grade: none, For: none, Over: none, AtMost: none, Every: none, Place: len(r.phases), Told: true,
-	}
+	p := duty.Blank(duty.Repeat, label)
+	p.Place, p.Told = len(r.phases), true
 	r.phases = append(r.phases, phasePlace{verb: r.src.Span(int(v.start), int(v.start)+1)})
 	whole := object{v}
 	if whole.get("repeat") != nil {

@@ -54,7 +54,7 @@ func (r *reader) quantity(v *value, want unit.Want) (float64, bool) {
 		if want.Unit == "" {
 			return r.plain(v)
 		}
-		r.list.At(r.span(v), "a plain number stands where "+article(want.Name)+" is due",
+		r.list.At(r.span(v), "a plain number stands where "+want.Phrase()+" is due",
 			fmt.Sprintf("write it as text with its unit: %q", v.text+" "+want.Unit))
 		return 0, false
 	}
@@ -62,17 +62,8 @@ func (r *reader) quantity(v *value, want unit.Want) (float64, bool) {
 	if want.Unit != "" {
 		help = fmt.Sprintf("write text with a unit, such as %q", "1 "+want.Unit)
 	}
-	r.list.At(r.span(v), kindNames[v.kind]+" stands where "+article(want.Name)+" is due", help)
+	r.list.At(r.span(v), kindNames[v.kind]+" stands where "+want.Phrase()+" is due", help)
 	return 0, false
-}
-
-// article puts "a" or "an" before a name.
-func article(name string) string {
-	switch name[0] {
-	case 'a', 'e', 'i', 'o', 'u':
-		return "an " + name
-	}
-	return "a " + name
 }
 
 // plain reads a JSON number.

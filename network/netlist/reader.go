@@ -4,6 +4,7 @@ package netlist
 
 import (
 	"fmt"
+	"slices"
 	"strconv"
 
 	"workheat/network/diag"
@@ -12,13 +13,12 @@ import (
 	"workheat/network/unit"
 )
 
-// Version is the version of the format that is read: the value of the key "workheat".
-const Version = 1
+// formatVersion is the version of the format that is read: the value of the key "workheat".
+const formatVersion = 1
 
 // A Netlist is what a file declares, in SI. Nodes that carry a state come first, held nodes last; within
 // each part they keep the order of the file, as everything else does.
 type Netlist struct {
-	Source   *diag.Source
 	Title    string
 	Nodes    []element.Node
 	Limits   [][]element.Limit // by node
@@ -36,21 +36,23 @@ type Netlist struct {
 
 // A declared element with its place.
 type declared struct {
-	section element.Section
-	name    string
-	at      diag.Span
-	value   *value
-	kind    *element.Kind
-	d       *element.Declaration
+	name  string
+	at    diag.Span
+	value *value
+	kind  *element.Kind
+	d     *element.Declaration
 }
 
 // An Opener returns the content of a file that a netlist refers to by its name.
 type Opener func(name string) ([]byte, error)
 
-// Defaults of the tolerance.
+// Defaults of the tolerance, and the relative ones that can be used: below, round-off is larger than the
+// tolerance; above, a step says nothing.
 const (
 	DefaultRel = 1e-5
 	DefaultAbs = 1e-5 // K
+	LeastRel   = 1e-12
+	MostRel    = 0.1
 )
 
 // Bounds of the report. A file with more than maxFound problems is not read to its end.
@@ -106,7 +108,7 @@ func Read(src *diag.Source, cat *element.Catalogue, open Opener) (*Netlist, []di
 		nodeAt: map[string]int{}, capacities: map[lump]*element.Curve{}, body: map[string]bool{},
 		kindKeys: map[*element.Kind][]string{},
 		tables:   map[string]int{}, signals: map[string]*declaredSignal{}, files: map[string]*sheet{},
-		net: &Netlist{Source: src, Rel: DefaultRel, Abs: DefaultAbs},
+		net: &Netlist{Rel: DefaultRel, Abs: DefaultAbs},
 	}
 	root, hush, ok := parse(src, &r.list)
 	syntax := r.list.Problems()
@@ -175,7 +177,7 @@ func (r *reader) root(v *value) {
 	}
 	r.version(o)
 	for _, m := range o.value.members() {
-		r.torn = r.torn || !contains(topKeys, m.key) // it may have held elements
+		r.torn = r.torn || !slices.Contains(topKeys, m.key) // it may have held elements
 	}
 	if title := o.get("title"); title != nil {
 		if title.kind != '"' {
@@ -187,8 +189,10 @@ func (r *reader) root(v *value) {
 	r.declareSignals(o.get("signals"))
 	r.nodes(o)
 	r.bodies(o.get("bodies"))
-	for _, section := range []element.Section{element.Conductances, element.Sources, element.Dissipators} {
-		r.section(section, o.get(string(section)))
+	for _, section := range element.Sections {
+		if section != element.Bodies { // they come first: others refer to them
+			r.section(section, o.get(string(section)))
+		}
 	}
 	r.accuracy(o.get("accuracy"))
 	r.output(o.get("output"))
@@ -201,14 +205,14 @@ func (r *reader) root(v *value) {
 
 func (r *reader) version(o object) {
 	v := o.get("workheat")
-	help := fmt.Sprintf(`write "workheat": %d`, Version)
+	help := fmt.Sprintf(`write "workheat": %d`, formatVersion)
 	switch {
 	case v == nil:
 		r.list.At(r.brace(o), `the key "workheat" is missing`, help+" as the first key: it is the version of the format")
 	case v.kind != '0':
 		r.list.At(r.span(v), "the version of the format is "+kindNames[v.kind]+", but a number is due", help)
 	default:
-		if x, err := strconv.ParseFloat(v.text, 64); err != nil || x != Version {
+		if x, err := strconv.ParseFloat(v.text, 64); err != nil || x != formatVersion {
 			r.list.At(r.span(v), fmt.Sprintf("version %s of the netlist format is not known here", v.text), help)
 		}
 	}
@@ -225,8 +229,8 @@ func (r *reader) accuracy(v *value) {
 	}
 	if x := o.get("relative"); x != nil {
 		if f, ok := r.quantity(x, unit.Number); ok {
-			if f < 1e-12 || f > 0.1 {
-				r.list.At(r.span(x), fmt.Sprintf("a relative tolerance of %g cannot be used", f), "give it between 1e-12 and 0.1; 1e-6 is usual")
+			if f < LeastRel || f > MostRel {
+				r.list.At(r.span(x), fmt.Sprintf("a relative tolerance of %g cannot be used", f), fmt.Sprintf("give it between %g and %g; %g is usual", LeastRel, MostRel, DefaultRel))
 			} else {
 				r.net.Rel, r.net.Abs = f, f
 			}

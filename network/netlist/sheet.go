@@ -6,6 +6,7 @@ import (
 	"errors"
 	"fmt"
 	"io"
+	"slices"
 	"strconv"
 	"strings"
 
@@ -75,7 +76,7 @@ func (r *reader) sheet(file *value) (*sheet, bool) {
 	}
 	text, err := r.open(file.text)
 	if err != nil {
-		r.list.At(r.span(file), fmt.Sprintf("the file %s cannot be read: %s", quote(file.text), reason(err)),
+		r.list.At(r.span(file), fmt.Sprintf("the file %s cannot be read: %s", quote(file.text), diag.Reason(err)),
 			"the name is taken from the folder of the netlist")
 		return nil, false
 	}
@@ -91,17 +92,6 @@ func (r *reader) sheet(file *value) (*sheet, bool) {
 	}
 	r.files[file.text] = s
 	return s, true
-}
-
-// reason returns the innermost text of an error, which names no folder of the machine.
-func reason(err error) string {
-	for {
-		inner := errors.Unwrap(err)
-		if inner == nil {
-			return err.Error()
-		}
-		err = inner
-	}
 }
 
 // reader returns a reader of the rows.
@@ -236,14 +226,14 @@ func (r *reader) column(s *sheet, o object, c column, at int, see []diag.Note) (
 		if !ok {
 			return nil, 0, false
 		}
-		if at = indexOf(names, name); at < 0 {
+		if at = slices.Index(names, name); at < 0 {
 			_, help := r.suggest(name, names)
 			r.list.At(r.span(v), fmt.Sprintf("the file has no column %s", quote(name)), help)
 			return nil, 0, false
 		}
 	}
 	if at >= len(s.head) {
-		return report(s.place(1), "a column with "+article(c.want.Name)+" is missing", "")
+		return report(s.place(1), "a column with "+c.want.Phrase()+" is missing", "")
 	}
 	_, u := splitHead(s.head[at])
 	if u == "" && c.want.Unit != "" {
@@ -270,15 +260,6 @@ func (r *reader) column(s *sheet, o object, c column, at int, see []diag.Note) (
 		}
 	}
 	return values, at, true
-}
-
-func indexOf(list []string, s string) int {
-	for i, x := range list {
-		if x == s {
-			return i
-		}
-	}
-	return -1
 }
 
 // splitHead splits "name [unit]" or "name (unit)".

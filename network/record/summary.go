@@ -26,25 +26,20 @@ type Margin struct {
 	First  float64 // s when it was first passed; NaN if never
 }
 
-// ripple is the fall from a high point, in K, that makes it a peak.
+// ripple is the fall from a high point, in K, that makes it a peak: far above the errors of a run, far below what
+// a designer calls a peak.
 const ripple = 0.01
 
 // Summarise reads the summary of a node from the tape.
 func Summarise(t *Tape, n Node) Summary {
-	s := Summary{Name: n.Name, Lowest: math.NaN(), When: 0}
-	if n.State < 0 {
+	switch {
+	case n.State < 0:
 		return summariseHeld(t, n)
-	}
-	if t.Steps() == 0 {
-		s.Start, s.Highest, s.End = n.Start, n.Start, n.Start
-		for _, l := range n.Limits {
-			s.Limits = append(s.Limits, Margin{Limit: l, Margin: l.Temperature - n.Start, First: math.NaN()})
-		}
-		return s
+	case t.Steps() == 0:
+		return unrecorded(n)
 	}
 	_, _, _, first := t.Step(0)
-	s.Start = n.Temperature(first[n.State])
-	s.Highest = s.Start
+	s := Summary{Name: n.Name, Start: n.Temperature(first[n.State]), Lowest: math.NaN()}
 	high, highAt := first[n.State], 0.0
 	low := math.Inf(1)
 	fallen := false
@@ -78,6 +73,16 @@ func Summarise(t *Tape, n Node) Summary {
 	return s
 }
 
+// unrecorded is the summary of a node of a run without steps: it is where it started.
+func unrecorded(n Node) Summary {
+	s := Summary{Name: n.Name, Start: n.Start, Highest: n.Start, Lowest: math.NaN(), End: n.Start}
+	for _, l := range n.Limits {
+		s.Limits = append(s.Limits, Margin{Limit: l, Margin: l.Temperature - n.Start, First: math.NaN()})
+	}
+	return s
+}
+
+// summariseHeld reads the summary of a held node from its table.
 func summariseHeld(t *Tape, n Node) Summary {
 	end := t.End()
 	s := Summary{Name: n.Name, Held: true, Start: n.Given.At(0), Lowest: math.NaN(), End: n.Given.At(end)}
@@ -135,7 +140,7 @@ func (m *Margin) aboveGiven(n Node, end float64) {
 
 // eachTurn calls visit at every θ inside the step at which state i turns round, in order.
 func (t *Tape) eachTurn(coef []float64, i int, visit func(theta float64)) {
-	const looks = 8
+	const looks = 8 // the slope is a cubic: two turns closer than an eighth of a step are a ripple of it
 	first, rest := coef[t.n+i], 0.0
 	for k := 2; k <= t.degree; k++ {
 		rest += float64(k) * math.Abs(coef[k*t.n+i])

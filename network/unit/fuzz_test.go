@@ -40,12 +40,8 @@ func FuzzParse(f *testing.F) {
 		if q.Temp == Level && q.Value < 0 {
 			t.Errorf("Parse(%q) lies below absolute zero: %v", text, q.Value)
 		}
-		back, again := Parse(q.String(), nil)
-		if again != nil && q.Value != 0 && math.Abs(q.Value) > 1e-290 {
-			t.Errorf("%q prints as %q, which is no quantity: %v", text, q, again)
-		}
-		if again == nil && back.Dim != q.Dim {
-			t.Errorf("%q prints as %q, which is %v", text, q, back.Dim)
+		if back, again := Parse("1 "+q.Dim.String(), nil); q.Dim != (Dim{}) && (again != nil || back.Dim != q.Dim) {
+			t.Errorf("%q is in %v, which is read as %v: %v", text, q.Dim, back.Dim, again)
 		}
 	})
 }

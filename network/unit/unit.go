@@ -142,14 +142,4 @@ func (f *Fault) Error() string {
 	return f.Text + ": " + f.Help
 }
 
-// String returns the quantity in the unit that is usual for its dimension, or
-// in SI base units where none is, with up to 12 digits.
-func (q Quantity) String() string {
-	q = q.normal()
-	if w, ok := wantOf(q); ok {
-		return w.Format(q.Value, 12)
-	}
-	return number(q.Value, 12) + " " + q.Dim.String()
-}
-
 func finite(x float64) bool { return !math.IsNaN(x) && !math.IsInf(x, 0) }

@@ -7,7 +7,7 @@ import (
 
 // A Want is a kind of quantity that some place in a netlist calls for: its name, the
 // unit it is shown in, and whether it is a temperature level. The wants of this
-// room are ready made; others come from [NewWant].
+// room are ready made; others come from [NewWant]. The zero Want is not usable.
 type Want struct {
 	Name  string // "conductance"
 	Unit  string // unit for display, "W/K"; empty for a plain number
@@ -27,24 +27,13 @@ func NewWant(name, unit string) Want {
 	return Want{Name: name, Unit: unit, Level: s.Level, scale: s}
 }
 
-// ready fills the scale of a want that was written as a literal.
-func (w Want) ready() Want {
-	if w.scale.Factor == 0 {
-		level := w.Level
-		w = NewWant(w.Name, w.Unit)
-		w.Level = w.Level || level
-	}
-	return w
-}
-
 // Dim returns the dimension that is wanted.
-func (w Want) Dim() Dim { return w.ready().scale.Dim }
+func (w Want) Dim() Dim { return w.scale.Dim }
 
 // Read parses text and returns its value in SI, a level in kelvin above
 // absolute zero. The fault points at the characters in question and its help
 // names the unit that is due.
 func (w Want) Read(text string, params Params) (float64, *Fault) {
-	w = w.ready()
 	q, fault := Parse(text, params)
 	if fault != nil {
 		fault.Help = join(fault.Help, w.due())
@@ -55,19 +44,6 @@ func (w Want) Read(text string, params Params) (float64, *Fault) {
 	}
 	start, end := trimmed(text)
 	return 0, &Fault{start, end, w.mismatch(q, text[start:end]), w.cure(q, text[start:end])}
-}
-
-// Check returns a fault without offsets if q is not what is wanted. It is for
-// values that come from somewhere else than a text; what names the value.
-func (w Want) Check(q Quantity, what string) *Fault {
-	w, q = w.ready(), q.normal()
-	if !w.fits(q) {
-		return &Fault{Text: w.mismatch(q, what), Help: w.cure(q, what)}
-	}
-	if !finite(q.Value) {
-		return &Fault{Text: what + " is not finite"}
-	}
-	return w.tooCold(q.Value, "")
 }
 
 // fits reports whether q has the dimension and the meaning that is wanted.
@@ -94,9 +70,9 @@ const belowZero = "a temperature level lies below absolute zero"
 // mismatch is the text of a fault of dimension.
 func (w Want) mismatch(q Quantity, text string) string {
 	if q.Dim == (Dim{}) {
-		return fmt.Sprintf("%s has no unit, but %s is due", short(text), article(w.Name))
+		return fmt.Sprintf("%s has no unit, but %s is due", short(text), w.Phrase())
 	}
-	return fmt.Sprintf("%s is %s, but %s is due", short(text), describe(q), article(w.Name))
+	return fmt.Sprintf("%s is %s, but %s is due", short(text), describe(q), w.Phrase())
 }
 
 // cure is the help of a fault of dimension.
@@ -139,7 +115,10 @@ func (w Want) due() string {
 }
 
 // Show returns an SI value in the unit for display.
-func (w Want) Show(si float64) float64 { return w.ready().scale.Show(si) }
+func (w Want) Show(si float64) float64 { return w.scale.Show(si) }
+
+// Shown returns the scale of the unit for display.
+func (w Want) Shown() Scale { return w.scale }
 
 // Format returns an SI value as text in the unit for display, such as
 // "20 degC", with that many significant digits; digits below 1 or above 17
@@ -155,7 +134,6 @@ func (w Want) Format(si float64, digits int) string {
 // Scale reads a unit alone, such as the head of a column in a table of values,
 // and checks that values in it are what is wanted.
 func (w Want) Scale(text string) (Scale, *Fault) {
-	w = w.ready()
 	s, fault := ParseUnit(text)
 	if fault != nil {
 		fault.Help = join(fault.Help, w.due())
@@ -177,12 +155,12 @@ func join(a, b string) string {
 	return a + "; " + b
 }
 
-// article puts "a" or "an" before a name.
-func article(name string) string {
-	if name != "" && strings.ContainsRune("aeiou", rune(name[0])) {
-		return "an " + name
+// Phrase returns the name with its article: "a conductance", "an area".
+func (w Want) Phrase() string {
+	if w.Name != "" && strings.ContainsRune("aeiou", rune(w.Name[0])) {
+		return "an " + w.Name
 	}
-	return "a " + name
+	return "a " + w.Name
 }
 
 // short returns text for quoting in a fault, cut when it is long.
@@ -209,7 +187,7 @@ func describe(q Quantity) string {
 	var names []string
 	for _, w := range wants {
 		if w.scale.Dim == q.Dim && len(names) < 2 {
-			names = append(names, article(w.Name))
+			names = append(names, w.Phrase())
 		}
 	}
 	if len(names) == 0 {

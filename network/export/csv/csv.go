@@ -72,7 +72,7 @@ func newTable(s *record.Series) *table {
 
 func (t *table) add(name string, w unit.Want, values []float64) {
 	t.heads = append(t.heads, outcome.Head(name, w))
-	t.scales = append(t.scales, outcome.ScaleOf(w))
+	t.scales = append(t.scales, w.Shown())
 	t.values = append(t.values, values)
 }
 

@@ -101,15 +101,6 @@ func TimeWant(span float64) unit.Want {
 	return unit.Time
 }
 
-// ScaleOf returns the scale in which values of a want are shown.
-func ScaleOf(w unit.Want) unit.Scale {
-	s, fault := unit.ParseUnit(w.Unit)
-	if fault != nil {
-		panic("outcome: the unit of a column cannot be read: " + w.Unit)
-	}
-	return s
-}
-
 // Head returns a name with its unit, such as "disc [degC]".
 func Head(name string, w unit.Want) string {
 	if w.Unit == "" {

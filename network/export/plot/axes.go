@@ -25,7 +25,7 @@ func newAxes(end float64, curves []outcome.Curve, low, high float64) axes {
 	if len(curves) > 0 {
 		a.level = curves[0].Want
 	}
-	a.timeScale, a.levelScale = outcome.ScaleOf(a.time), outcome.ScaleOf(a.level)
+	a.timeScale, a.levelScale = a.time.Shown(), a.level.Shown()
 	a.end = a.timeScale.Show(end)
 	if !(a.end > 0) {
 		a.end = 1

@@ -48,7 +48,8 @@ func (s *scene) title(c *draw.Canvas) {
 	wide := c.Max.X - c.Min.X
 	head, sub := bold(write(13, ink, 0, -1)), write(8, quiet, 0, -1)
 	c.FillText(head, vg.Point{X: c.Min.X, Y: c.Max.Y}, clip(head, outcome.Clean(s.Title), wide))
-	text := fmt.Sprintf("%s, %.6g s, %s", s.Source, s.End, s.Program)
+	length := outcome.TimeWant(s.End)
+	text := fmt.Sprintf("%s, %s, %s", s.Source, length.Format(s.End, 5), s.Program)
 	c.FillText(sub, vg.Point{X: c.Min.X, Y: c.Max.Y - 18}, clip(sub, outcome.Clean(text), wide))
 }
 

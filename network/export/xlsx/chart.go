@@ -195,7 +195,7 @@ func (b *book) chartData() error {
 		units[k], units[k+1] = b.text(outcome.Head("time", d.time), styleHead), b.text("["+d.level.Unit+"]", styleHead)
 		styles[k], styles[k+1] = "0.000", "0.00"
 		widths[k], widths[k+1] = 11, 16
-		column = append(column, shown(outcome.ScaleOf(d.time), time), shown(outcome.ScaleOf(d.level), value))
+		column = append(column, shown(d.time.Shown(), time), shown(d.level.Shown(), value))
 		rows = max(rows, len(time))
 	}
 	for i := range d.curves {

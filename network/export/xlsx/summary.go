@@ -62,7 +62,7 @@ func (b *book) nodeWidth() float64 {
 
 // summaryRows writes a node, one row for each of its limits.
 func (b *book) summaryRows(out *sheet, s *record.Summary) {
-	level := outcome.ScaleOf(unit.Temperature)
+	level := unit.Temperature.Shown()
 	name := s.Name
 	if s.Held {
 		name += " (held)"

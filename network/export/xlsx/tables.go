@@ -23,13 +23,13 @@ func (b *book) table(name string, s *record.Series, take func(record.Group) bool
 	heads := []string{outcome.Head("time", unit.Time)}
 	styles := []string{decimals(b.timeDecimals(s.Time))}
 	columns := [][]float64{s.Time}
-	scales := []unit.Scale{outcome.ScaleOf(unit.Time)}
+	scales := []unit.Scale{unit.Time.Shown()}
 	for i := range s.Columns {
 		c := &s.Columns[i]
 		if !take(c.Group) {
 			continue
 		}
-		scale := outcome.ScaleOf(c.Want)
+		scale := c.Want.Shown()
 		format := formatTenth
 		if c.Group != record.Temperatures {
 			format = formatFor(shown(scale, c.Values))

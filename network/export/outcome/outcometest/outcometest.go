@@ -126,7 +126,7 @@ func series(n int, end, interval float64) *record.Series {
 		f := func(t float64) float64 { return 7 * (Temperature(n, i, t) - Temperature(n, i+1, t)) }
 		add(Name(i)+" to "+Name(i+1), record.Flows, unit.Power, nil, f)
 	}
-	add("speed", record.Vehicle, unit.NewWant("speed", "km/h"), nil, func(t float64) float64 { return 20 + 10*math.Sin(t/7) })
+	add("speed", record.Vehicle, unit.RoadSpeed, nil, func(t float64) float64 { return 20 + 10*math.Sin(t/7) })
 	for k := range Rounds {
 		at := float64(k) * Every
 		s.Segments = append(s.Segments,
