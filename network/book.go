@@ -97,6 +97,9 @@ func (r *runner) handVehicle(run *energy.Run) {
 		Name: r.model.Net.Body, Distance: a.Distance, Drive: a.Drive, Kinetic: a.Kinetic,
 		Climb: a.Climb, Rolling: a.Rolling, Air: a.Air, Brake: a.Brake,
 	}
+	if a.Brake > 0 {
+		run.Torqued = a.Torqued / a.Brake
+	}
 	for _, g := range r.model.Net.Groups {
 		if g.Kind.Section != element.Dissipators {
 			continue

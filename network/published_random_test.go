@@ -70,9 +70,9 @@ func TestRandomNetworks(t *testing.T) {
 }
 
 // measured reports whether a check that has not passed measures the error of the integration and is near what it
-// allows. On networks with heat capacities that jump five-fold that may happen: about one in three hundred here.
+// allows. Networks with nodes that follow their neighbours at once may come to that: one in three hundred here.
 func measured(c energy.Check) bool {
-	return (c.Name == "recount" || c.Name == "tolerance") && c.Gap <= 4*c.Allowed
+	return (c.Name == "recount" || c.Name == "tolerance") && c.Gap <= 2*c.Allowed
 }
 
 // sameBits compares two runs without any tolerance.

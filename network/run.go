@@ -27,6 +27,7 @@ type runner struct {
 	account duty.Account
 	observe ode.Observer
 	jumpers []jumper // nodes whose heat capacity jumps
+	seen    float64  // K, for the book's Leg.Seen
 
 	// What tests may break on purpose; false in every real run.
 	dropEvents bool
@@ -116,6 +117,7 @@ func (r *runner) warn(format string, args ...any) {
 // leg runs one leg and returns when it ended; done is false when the run must stop.
 func (r *runner) leg(ctx context.Context, leg *duty.Leg) (end float64, done bool) {
 	record := energy.Leg{Label: leg.Label, Start: leg.Start, End: leg.Start, Node: -1}
+	r.seen = math.NaN()
 	var events []ode.Event
 	if u := leg.Until; u != nil {
 		record.Node, record.Falls, record.Target = u.Node, u.Falls, u.Temperature
@@ -124,7 +126,7 @@ func (r *runner) leg(ctx context.Context, leg *duty.Leg) (end float64, done bool
 		}
 	}
 	reason := r.motions(ctx, leg, events)
-	record.End, record.Ended = r.t, reason == ode.Passed
+	record.End, record.Ended, record.Seen = r.t, reason == ode.Passed, r.seen
 	for i := range leg.Motions {
 		if x := leg.Motions[i].T1; x <= r.t {
 			record.Corners = append(record.Corners, x)
@@ -145,18 +147,23 @@ func (r *runner) leg(ctx context.Context, leg *duty.Leg) (end float64, done bool
 
 // event returns the event that a node's temperature passes a mark.
 func (r *runner) event(u *duty.Until) ode.Event {
-	n := r.result.Nodes[u.Node]
 	sign := 1.0
 	if u.Falls {
 		sign = -1
 	}
 	value := func(t float64, y []float64) float64 {
-		if n.State < 0 {
-			return sign * (n.Given.At(t) - u.Temperature)
-		}
-		return sign * (n.Temperature(y[n.State]) - u.Temperature)
+		return sign * (r.result.temperature(u.Node, t, y) - u.Temperature)
 	}
-	return ode.Event{Name: n.Name, Value: value, Accuracy: math.Max(1e-9, r.result.Abs)}
+	return ode.Event{Name: r.result.Nodes[u.Node].Name, Value: value, Accuracy: math.Max(1e-9, r.result.Abs)}
+}
+
+// temperature returns the temperature [K] of a node at a time and state.
+func (res *Result) temperature(node int, t float64, y []float64) float64 {
+	n := &res.Nodes[node]
+	if n.State < 0 {
+		return n.Given.At(t)
+	}
+	return n.Temperature(y[n.State])
 }
 
 // motions runs the motions of a leg, each cut at the breaks of the tables.
@@ -201,6 +208,8 @@ func (r *runner) segment(ctx context.Context, leg *duty.Leg, m *duty.Motion, end
 	r.model.system.Restart()
 	failure := r.integ.Restart(start, r.y)
 	if failure == nil && passed(events, start, r.integ.State()) {
+		copy(r.y, r.integ.State()) // nodes without mass may have jumped
+		r.seen = r.result.temperature(leg.Until.Node, start, r.y)
 		return ode.Passed
 	}
 	res.Segments = append(res.Segments, record.Segment{
@@ -208,6 +217,7 @@ func (r *runner) segment(ctx context.Context, leg *duty.Leg, m *duty.Motion, end
 	})
 	res.motions = append(res.motions, motion{start, end, m})
 	if failure != nil {
+		r.explain(failure, r.y)
 		res.Failure = failure
 		return ode.Failed
 	}
@@ -221,6 +231,7 @@ func (r *runner) segment(ctx context.Context, leg *duty.Leg, m *duty.Motion, end
 	}
 	switch stop.Reason {
 	case ode.Failed:
+		r.explain(stop.Failure, r.y)
 		res.Failure = stop.Failure
 	case ode.Interrupted:
 		res.Interrupted = true
@@ -243,65 +254,6 @@ func passed(events []ode.Event, t float64, y []float64) bool {
 func (r *runner) summarise() {
 	for _, i := range r.model.Net.Order {
 		r.result.Summary = append(r.result.Summary, record.Summarise(r.result.Tape, r.result.Nodes[i]))
-	}
-}
-
-// rangeWarnings looks, at the end of every step, for laws used outside their range, and for materials.
-func (r *runner) rangeWarnings() {
-	r.lawWarnings()
-	for j, i := range r.model.Net.Order {
-		r.materialWarning(i, r.result.Summary[j])
-	}
-}
-
-// lawWarnings warns once for each path and text.
-func (r *runner) lawWarnings() {
-	tape, sys := r.result.Tape, r.model.system
-	y := make([]float64, tape.States())
-	type fault struct {
-		path int
-		text string
-	}
-	seen := map[fault]bool{}
-	at, entered := 0.0, -1
-	report := func(path int, text string) {
-		if f := (fault{path, text}); !seen[f] {
-			seen[f] = true
-			r.warn("%s: %s, first at %.4g s", sys.Paths[path].Element, text, at)
-		}
-	}
-	watch := sys.Watch(report)
-	if watch == nil {
-		return
-	}
-	for k := 0; k < tape.Steps(); k++ {
-		start, h, segment, coef := tape.Step(k)
-		for i := range y {
-			y[i] = tape.Value(coef, i, 1)
-		}
-		if segment != entered {
-			r.result.enter(segment)
-			entered = segment
-		}
-		at = start + h
-		watch(sys.State(at, y, nil))
-	}
-}
-
-// materialWarning says when a node has left the range of its material's data.
-func (r *runner) materialWarning(i int, s record.Summary) {
-	m := r.model.Net.Material[i]
-	if m == nil || m.Capacity == nil {
-		return
-	}
-	const slack = 20 // K below the range that the end value surely serves
-	if s.Highest > m.High {
-		r.warn("%s: the heat capacity of %s is known up to %s; above it the end value %.4g J/(kg K) was used", s.Name, m.Name,
-			unit.Temperature.Format(m.High, 4), m.Capacity.At(m.High))
-	}
-	if low := math.Min(s.Start, s.End); low < m.Low-slack {
-		r.warn("%s: the heat capacity of %s is known from %s; below it the end value %.4g J/(kg K) was used", s.Name, m.Name,
-			unit.Temperature.Format(m.Low, 4), m.Capacity.At(m.Low))
 	}
 }
 

@@ -61,6 +61,33 @@ func TestUntilJumpedOver(t *testing.T) {
 	}
 }
 
+// A node without mass cools at once, at a jump of a table within the phase that waits for it or where that phase begins,
+// and the brakes heat it again at once where the next begins: the book closes all the same.
+func TestUntilJumpedOverAndBack(t *testing.T) {
+	text := func(more string) string {
+		return `{"workheat": 1, "nodes": {"face": {"massless": true}, "body": {"heat capacity": "1 kJ/K", "start": "20 degC"}},
+		"bodies": {"cart": {"kind": "road vehicle", "mass": "500 kg"}},
+		"conductances": {"skin": {"kind": "conduction", "between": ["face", "body"], "value": "10 W/K"}},
+		"dissipators": {"pad": {"kind": "friction pad", "slows": "cart", "part of braking": 0.1, "heats": {"face": 1}}},
+		"sources": {"heater": {"kind": "given heat", "into": "face", "power": {"table": [["0 s", "1 kW"], ["30 s", "1 kW"], ["30 s", "0 W"]]}}},
+		"duty": [` + more + `, {"brake": {"to": "0 m/s", "deceleration": "5 m/s^2"}}, {"rest": {"for": "7 s"}}]}`
+	}
+	const wait = `{"hold": {"speed": "20 m/s", "until": {"node": "face", "falls to": "90 degC"}, "at most": "200 s"}}`
+	for name, before := range map[string]string{
+		"within the phase": wait,
+		"where it begins":  `{"hold": {"speed": "20 m/s", "for": "30 s"}}, ` + wait,
+		"after braking":    `{"hold": {"speed": "30 m/s", "for": "40 s"}}, {"brake": {"to": "20 m/s", "deceleration": "5 m/s^2"}}, ` + wait,
+	} {
+		t.Run(name, func(t *testing.T) {
+			end := 30 + 4 + 7.0
+			if name == "after braking" {
+				end = 40 + 2 + 4 + 7
+			}
+			near(t, "end", run(t, text(before), 1e-6).End, end, 1e-9)
+		})
+	}
+}
+
 // A duty of which nothing is left to do ends at once and says how things stand.
 func TestDutyOverAtOnce(t *testing.T) {
 	m := load(t, lump(`{"heat capacity": "3430 J/K", "start": "300 degC"}`, "20 degC", `"area": "0.12 m^2", "coefficient": "60 W/(m^2 K)"`, "",

@@ -158,8 +158,12 @@ func printChecks(w io.Writer, b *energy.Book, whole bool) {
 	if !b.Closed {
 		verdict = "THE BOOK IS NOT CLOSED"
 	}
-	fmt.Fprintf(w, "\n%s: %s missing by the ledger (%s of the throughput), %s by the recount (%s).\n",
-		verdict, joule(b.LedgerGap), part(b.LedgerGap, b.Throughput), joule(b.IndependentGap), part(b.IndependentGap, b.Throughput))
+	fmt.Fprintf(w, "\n%s: %s missing by the ledger%s, %s by the recount%s.\n", verdict, joule(b.LedgerGap),
+		part(b.LedgerGap, b.Throughput, " of the throughput"), joule(b.IndependentGap), part(b.IndependentGap, b.Throughput, ""))
+	if b.Closed && b.IndependentGap > coarse*b.Throughput {
+		fmt.Fprintln(w, wrap("The recount tells little here: what the tolerance and the roundings of the temperatures carry along the "+
+			"conductances is not small beside the energy that passed the border.", 0))
+	}
 	for _, c := range b.Checks {
 		if c.Layer == 3 {
 			fmt.Fprintf(w, "A second run at a tenth of the tolerance moved the highest temperatures by %s K at most (%s K allowed).\n",
@@ -183,9 +187,13 @@ func printChecks(w io.Writer, b *energy.Book, whole bool) {
 
 func joule(x float64) string { return plain(x) + " J" }
 
-func part(x, of float64) string {
+// coarse is the share of the throughput from which on a gap of the recount proves little.
+const coarse = 0.01
+
+// part shows x as a share in brackets, or nothing when there is nothing to share.
+func part(x, of float64, what string) string {
 	if of == 0 {
-		return "no energy passed the border"
+		return ""
 	}
-	return strings.NewReplacer("e-0", "e-").Replace(fmt.Sprintf("%.1g", x/of))
+	return " (" + strings.NewReplacer("e-0", "e-").Replace(fmt.Sprintf("%.1g", x/of)) + what + ")"
 }

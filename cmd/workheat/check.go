@@ -1,6 +1,7 @@
 package main
 
 import (
+	"context"
 	"fmt"
 	"io"
 	"math"
@@ -31,12 +32,12 @@ line has problems.`,
 		Args:    oneNetlist,
 	}
 	c.Flags().BoolVar(&opt.strict, "strict", false, "exit with 1 if there are warnings")
-	c.RunE = func(c *cobra.Command, args []string) error { return check(e, args[0], opt) }
+	c.RunE = func(c *cobra.Command, args []string) error { return check(c.Context(), e, args[0], opt) }
 	return c
 }
 
-func check(e env, name string, opt checkOptions) error {
-	model, err := load(e, name)
+func check(ctx context.Context, e env, name string, opt checkOptions) error {
+	model, _, err := load(ctx, e, name)
 	if err != nil {
 		return err
 	}

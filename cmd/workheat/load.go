@@ -1,10 +1,8 @@
 package main
 
 import (
-	"errors"
+	"context"
 	"fmt"
-	"os"
-	"path/filepath"
 
 	"github.com/spf13/cobra"
 
@@ -23,21 +21,14 @@ func oneNetlist(c *cobra.Command, args []string) error {
 
 // load reads a netlist file and reports its problems. It returns an error that is already reported when
 // the netlist cannot be used.
-func load(e env, name string) (*network.Model, error) {
-	text, err := os.ReadFile(name)
+func load(ctx context.Context, e env, name string) (*network.Model, *source, error) {
+	src, err := readSource(ctx, name)
 	if err != nil {
-		return nil, coded{exitProblem, fmt.Sprintf("%s cannot be read: %s", name, diag.Reason(err))}
+		return nil, nil, err
 	}
-	folder := filepath.Dir(name)
-	open := func(file string) ([]byte, error) {
-		if filepath.IsAbs(file) || !filepath.IsLocal(file) {
-			return nil, errors.New("only files in the folder of the netlist, or below it, are read")
-		}
-		return os.ReadFile(filepath.Join(folder, file))
-	}
-	model, problems := network.Load(&diag.Source{Name: name, Text: text}, library.Catalogue(), open)
+	model, problems := network.Load(&diag.Source{Name: name, Text: src.text}, library.Catalogue(), src.open)
 	if model != nil {
-		return model, nil
+		return model, src, nil
 	}
 	render(e, problems)
 	faults := 0
@@ -50,7 +41,7 @@ func load(e env, name string) (*network.Model, error) {
 	if faults == 1 {
 		what = "problem"
 	}
-	return nil, coded{exitProblem, fmt.Sprintf("%s has %d %s; nothing was run", name, faults, what)}
+	return nil, nil, coded{exitProblem, fmt.Sprintf("%s has %d %s; nothing was run", name, faults, what)}
 }
 
 func render(e env, problems []diag.Problem) {

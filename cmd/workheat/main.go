@@ -13,6 +13,8 @@ import (
 	"syscall"
 
 	"github.com/spf13/cobra"
+
+	"workheat/network/diag"
 )
 
 // version is the version of the program; a release sets it.
@@ -29,7 +31,8 @@ const (
 // An env is what a command may touch of the world.
 type env struct {
 	out, err io.Writer
-	colour   bool // of err
+	terminal bool // err is one
+	colour   bool // err may be coloured
 }
 
 // A coded error ends the program with a code of its own. An empty text prints nothing: all was said.
@@ -42,7 +45,9 @@ func (c coded) Error() string { return c.text }
 
 func main() {
 	ctx, stop := signal.NotifyContext(context.Background(), os.Interrupt, syscall.SIGTERM)
-	e := env{out: os.Stdout, err: os.Stderr, colour: isTerminal(os.Stderr) && os.Getenv("NO_COLOR") == ""}
+	e := env{out: os.Stdout, err: os.Stderr, terminal: isTerminal(os.Stderr)}
+	e.colour = e.terminal && os.Getenv("NO_COLOR") == ""
+	context.AfterFunc(ctx, stop) // a second interruption ends the program at once
 	code := execute(ctx, e, os.Args[1:])
 	stop()
 	os.Exit(code)
@@ -55,6 +60,18 @@ func isTerminal(f *os.File) bool {
 
 // execute runs the command line and returns the exit code.
 func execute(ctx context.Context, e env, args []string) int {
+	out := &checkedWriter{to: e.out}
+	e.out = out
+	code := command(ctx, e, args)
+	if out.err != nil {
+		fmt.Fprintln(e.err, "workheat: writing the output:", diag.Reason(out.err))
+		return max(code, exitProblem)
+	}
+	return code
+}
+
+// command runs the command line and reports its error.
+func command(ctx context.Context, e env, args []string) int {
 	root := newRoot(e)
 	root.SetArgs(args)
 	root.SetOut(e.out)

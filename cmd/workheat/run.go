@@ -3,8 +3,8 @@ package main
 import (
 	"context"
 	"fmt"
-	"os"
 	"path/filepath"
+	"strings"
 	"time"
 
 	"github.com/spf13/cobra"
@@ -62,8 +62,11 @@ func run(ctx context.Context, e env, name string, opt runOptions) error {
 	if err != nil {
 		return err
 	}
-	model, err := load(e, name)
+	model, src, err := load(ctx, e, name)
 	if err != nil {
+		return err
+	}
+	if err := src.checkOutputs(opt.files); err != nil {
 		return err
 	}
 	before := cpu.Seconds()
@@ -77,7 +80,7 @@ func run(ctx context.Context, e env, name string, opt runOptions) error {
 	if err := opt.print(e, name, res, used); err != nil {
 		return err
 	}
-	if err := writeFiles(e, name, opt, res, every); err != nil {
+	if err := writeFiles(e, src, opt, res, every); err != nil {
 		return err
 	}
 	return verdict(res, opt.strict)
@@ -116,7 +119,7 @@ func (o *runOptions) print(e env, name string, res *network.Result, used float64
 
 // progressTo shows the phase on a terminal once a run takes longer than a moment.
 func progressTo(e env, quiet bool) (progress func(t float64, label string), end func()) {
-	if quiet || !e.colour {
+	if quiet || !e.terminal {
 		return nil, func() {}
 	}
 	begin, shown := time.Now(), time.Time{}
@@ -133,17 +136,13 @@ func progressTo(e env, quiet bool) (progress func(t float64, label string), end 
 	}
 }
 
-// writeFiles writes every file that was asked for.
-func writeFiles(e env, name string, opt runOptions, res *network.Result, every float64) error {
+// writeFiles writes every file that was asked for, also when one of them cannot be written.
+func writeFiles(e env, src *source, opt runOptions, res *network.Result, every float64) error {
 	if len(opt.files) == 0 {
 		return nil
 	}
-	text, err := os.ReadFile(name)
-	if err != nil {
-		return coded{exitProblem, fmt.Sprintf("%s cannot be read again: %s", name, diag.Reason(err))}
-	}
 	o := &export.Outcome{
-		Title: title(res, name), Source: filepath.Base(name), Netlist: text, Program: "workheat " + version,
+		Title: title(res, src.name), Source: filepath.Base(src.name), Netlist: src.text, Program: "workheat " + version,
 		Summary: res.Summary, Interval: every, End: res.End, Book: res.Book, Warnings: allWarnings(res),
 		Caution: network.Caution, Interrupted: res.Interrupted,
 		Settings: [][2]string{
@@ -154,13 +153,21 @@ func writeFiles(e env, name string, opt runOptions, res *network.Result, every f
 		},
 		Series: res.Series,
 	}
+	if res.Failure != nil {
+		o.Failure = res.Failure.Error()
+	}
+	var faults []string
 	for _, f := range opt.files {
 		if err := export.ToFile(f, o); err != nil {
-			return coded{exitProblem, fmt.Sprintf("writing %s: %s", f, diag.Reason(err))}
+			faults = append(faults, fmt.Sprintf("writing %s: %s", f, diag.Reason(err)))
+			continue
 		}
 		if !opt.quiet {
 			fmt.Fprintf(e.err, "wrote %s\n", f)
 		}
+	}
+	if faults != nil {
+		return coded{exitProblem, strings.Join(faults, "\nworkheat: ")}
 	}
 	return nil
 }

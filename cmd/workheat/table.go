@@ -37,6 +37,9 @@ func printRun(w io.Writer, name string, res *network.Result, whole bool) {
 	if res.Interrupted {
 		fmt.Fprintf(w, "\nInterrupted at %s: the tables hold what was reached.\n", clock(res.End))
 	}
+	if res.Failure != nil {
+		fmt.Fprintf(w, "\nTHE NUMBERS FAILED at %s: the tables hold what was reached.\n", clock(res.End))
+	}
 	s := res.Stats
 	fmt.Fprintf(w, "\n%s, relative tolerance %s: %d steps, %d rejected\n", res.Method, plain(res.Rel), s.Steps, s.Rejected)
 	fmt.Fprintln(w, wrap(network.Caution, 0))

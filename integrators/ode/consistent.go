@@ -25,12 +25,16 @@ func (g *Integrator) makeConsistent() *Failure {
 		if !g.stepper.Newton(g.change) {
 			return g.failure("the algebraic equations have no solution here (a singular matrix)", 0)
 		}
+		before := residual
 		way, damp, ok := g.descend(&residual)
 		if !ok {
 			return g.failure("the algebraic equations have no solution near the start", 0)
 		}
 		if way < settled*g.tol.Abs || (damp == 1 && way < quadratic*g.tol.Abs) {
 			return nil
+		}
+		if way < g.tol.Abs && !(residual < before) {
+			return nil // round-off is all that is left
 		}
 	}
 	return g.failure("the algebraic equations did not settle", 0)

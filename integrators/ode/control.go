@@ -12,6 +12,7 @@ const (
 	badMost   = 10    // such failures in a row end the run
 	stretch   = 1.05  // a step that would leave less than 5 % is stretched to the end
 	leastStep = 1e-14 // of the time: some 50 roundings of it, below which a step's length means little
+	atLeast   = 1.05  // a step up to so many least ones counts as one: its ends are rounded
 )
 
 // A pace is the length of the next step and what it must respect.
@@ -44,10 +45,11 @@ func (p *pace) reject(h, factor, t float64) string {
 		p.bad++
 	}
 	p.h = h * factor
+	shortest := h <= atLeast*least(t)
 	switch {
-	case !finite && (p.bad > badMost || h <= least(t)):
+	case !finite && (p.bad > badMost || shortest):
 		return "a value is not finite however small the step"
-	case h <= least(t):
+	case shortest:
 		return "the step has become too small to go on"
 	}
 	return ""

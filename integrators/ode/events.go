@@ -14,7 +14,8 @@ type Event struct {
 
 const (
 	looks    = 10    // points of the dense output at which events are tested within a step
-	landings = 12    // step attempts to land on an event
+	landings = 20    // step attempts to land on an event
+	secants  = 4     // of these by the secant method
 	narrow   = 1e-10 // of a step: events closer together than this count as simultaneous
 	back     = 1e-3  // of a step, over which the slope of an event's value at its end is taken
 )
@@ -117,19 +118,18 @@ func (g *Integrator) probe(s *Step, theta float64) []float64 {
 }
 
 // land takes the step again so that it ends just past the event: the dense output says about where (theta)
-// and how steep; the secant method on the end of the step itself, kept between ends that are too early and
-// too late, says exactly. landed is false if no length was past zero: the dense output had only touched it. ok is
-// false if a try failed.
+// and how steep; the zero of the event's value at the end of the step itself says exactly. landed is false if no
+// length was past zero: the dense output had only touched it. ok is false if a try failed.
 func (g *Integrator) land(theta float64, e *Event) (landed, ok bool) {
 	s := g.stepper.Step()
-	start, short, long := s.T, s.T, s.End
-	past := e.Value(s.End, s.Y1) >= 0
-	next := math.Min(start+theta*s.H, long)
-	if !(next > start) {
-		next = math.Nextafter(start, long)
+	goal := 0.5 * e.Accuracy
+	z := bracket{low: s.T, high: s.End, under: e.Value(s.T, s.Y0) - goal, over: e.Value(s.End, s.Y1) - goal}
+	past := z.over >= -goal
+	next := math.Min(s.T+theta*s.H, s.End)
+	if !(next > s.T) {
+		next = math.Nextafter(s.T, s.End)
 	}
-	lastEnd, lastValue := math.NaN(), math.NaN()
-	for range landings {
+	for k := range landings {
 		if next != s.End && !g.stepper.Try(next) {
 			return false, false
 		}
@@ -137,29 +137,68 @@ func (g *Integrator) land(theta float64, e *Event) (landed, ok bool) {
 		if v >= 0 && v <= e.Accuracy {
 			return true, true
 		}
-		if v >= 0 {
-			long, past = next, true
-		} else {
-			short = next
+		past = past || v >= 0
+		z.take(next, v-goal, v >= 0)
+		switch {
+		case k == 0:
+			next -= (v - goal) / g.eventRate(e)
+		case k < secants:
+			next = z.secant()
+		default:
+			next = z.cut()
 		}
-		rate := (v - lastValue) / (next - lastEnd)
-		if math.IsNaN(rate) {
-			rate = g.eventRate(e)
+		if !(next > z.low && next < z.high) {
+			next = 0.5 * (z.low + z.high)
 		}
-		lastEnd, lastValue = next, v
-		next += (0.5*e.Accuracy - v) / rate
-		if !(next > short && next < long) {
-			next = 0.5 * (short + long)
-		}
-		if !(next > short && next < long) {
+		if !(next > z.low && next < z.high) {
 			break // the two are neighbours
 		}
 	}
-	if past && s.End != long {
-		ok = g.stepper.Try(long)
+	if past && s.End != z.high {
+		ok = g.stepper.Try(z.high)
 		return ok, ok
 	}
 	return past, true
+}
+
+// A bracket holds a zero between two places, with the values there and at the two places tried last.
+type bracket struct {
+	low, high   float64
+	under, over float64
+	x, y        [2]float64
+	side        int
+}
+
+// take takes in the value y at x, which is past the zero or before it. When one end stays twice in a row its value
+// counts half (the Illinois rule; Dowell and Jarratt, BIT 11 (1971) 168).
+func (z *bracket) take(x, y float64, past bool) {
+	z.x, z.y = [2]float64{z.x[1], x}, [2]float64{z.y[1], y}
+	side := -1
+	if past {
+		side = 1
+	}
+	switch {
+	case past && z.side == side:
+		z.under /= 2
+	case z.side == side:
+		z.over /= 2
+	}
+	if z.side = side; past {
+		z.high, z.over = x, y
+	} else {
+		z.low, z.under = x, y
+	}
+}
+
+// secant returns where the line through the two places tried last is zero.
+func (z *bracket) secant() float64 {
+	return z.x[1] - z.y[1]*(z.x[1]-z.x[0])/(z.y[1]-z.y[0])
+}
+
+// cut returns where the line through the two ends is zero. It serves where the value breaks its slope at the zero,
+// which leads the secant astray.
+func (z *bracket) cut() float64 {
+	return z.low + (z.high-z.low)*z.under/(z.under-z.over)
 }
 
 // eventRate returns the slope in time of the event's value at the end of the tried step, by its dense output.

@@ -9,6 +9,7 @@ import (
 // A Failure says where and how the numbers failed.
 type Failure struct {
 	Text  string
+	Help  string  // what to do about it, or empty; for the caller to fill in
 	T, H  float64 // where the step began, and its length; zero at a start
 	Worst []Worst // the states with the largest error over tolerance, at most three
 }
@@ -24,6 +25,9 @@ func (f *Failure) Error() string {
 	text := fmt.Sprintf("at t = %.6g s with a step of %.3g s: %s", f.T, f.H, f.Text)
 	for _, w := range f.Worst {
 		text += fmt.Sprintf("; %s: error over tolerance %.3g, rate %.3g per s", w.Name, w.Ratio, w.Rate)
+	}
+	if f.Help != "" {
+		text += "; cure: " + f.Help
 	}
 	return text
 }

@@ -14,6 +14,8 @@ type fake struct {
 	bump   float64
 	refuse int
 	most   float64 // 0: no limit
+	wall   float64 // steps that start here or later have an error of twice the tolerance; 0: none have
+	tries  int
 	step   ode.Step
 	stats  ode.Stats
 }
@@ -33,6 +35,12 @@ func (f *fake) Try(to float64) bool {
 	f.step.End, f.step.H, f.step.Y1[0], f.step.Err[0] = to, to-f.step.T, to, 0
 	if f.most > 0 && f.step.H > f.most {
 		f.step.Err[0] = math.Inf(1)
+	}
+	if f.wall > 0 && f.step.T >= f.wall {
+		f.step.Err[0] = 2
+	}
+	if f.tries++; f.tries > 1e4 {
+		panic("the run does not end")
 	}
 	return true
 }
@@ -92,5 +100,20 @@ func TestInfiniteError(t *testing.T) {
 	g, stop := runFake(&fake{most: 0.1}, 1, 2)
 	if s := g.Stats(); stop.Reason != ode.Reached || s.Rejected < 2 || s.Steps < 10 {
 		t.Errorf("reason %d, %d steps, %d rejected", stop.Reason, s.Steps, s.Rejected)
+	}
+}
+
+// TestWall meets an error that no step makes smaller, at times whose last digits differ: the shortest step, which is
+// rounded where it starts, must end the run each time.
+func TestWall(t *testing.T) {
+	for k := 1; k <= 500; k++ {
+		wall := 1e-3 * float64(k) / 7
+		f := &fake{wall: wall}
+		g := ode.New(&ode.Problem{N: 1}, f, ode.Tolerance{Abs: 1})
+		g.Restart(0, []float64{0})
+		g.Run(context.Background(), wall, wall, nil, nil)
+		if stop := g.Run(context.Background(), 2*wall, wall, nil, nil); stop.Reason != ode.Failed || stop.T != wall {
+			t.Errorf("reason %d at %g, want a failure at %g", stop.Reason, stop.T, wall)
+		}
 	}
 }

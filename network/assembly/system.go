@@ -10,7 +10,8 @@ import (
 // another segment.
 func (s *System) Restart() { s.time = math.NaN() }
 
-// Rates writes the balance of every state into f and the flow of every path into q.
+// Rates writes the balance of every state into f and the flow of every path into q. The balance of a node at or
+// below absolute zero is not a number: the laws mean nothing there, and no step may go there.
 func (s *System) Rates(f, q []float64, t float64, y []float64) {
 	s.place(t, y)
 	for i := range s.batches {
@@ -27,6 +28,11 @@ func (s *System) Rates(f, q []float64, t float64, y []float64) {
 		net[b[p]] += flow
 	}
 	copy(f, net[:s.states])
+	for i, t := range s.state.T[:s.states] {
+		if !(t > 0) {
+			f[i] = math.NaN()
+		}
+	}
 }
 
 // place sets signals and temperatures.

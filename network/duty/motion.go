@@ -99,6 +99,7 @@ type Account struct {
 	Rolling  float64 // work against rolling resistance
 	Air      float64 // work against air drag
 	Brake    float64 // work taken by all brakes
+	Torqued  float64 // of this, what was taken under a constant torque
 	Drive    float64 // work given by the engine
 }
 
@@ -110,6 +111,7 @@ func (a *Account) Add(b Account) {
 	a.Rolling += b.Rolling
 	a.Air += b.Air
 	a.Brake += b.Brake
+	a.Torqued += b.Torqued
 	a.Drive += b.Drive
 }
 
@@ -128,6 +130,7 @@ func (m *Motion) Account(ta, tb float64) Account {
 	a.Rolling = m.roll * a.Distance
 	if m.coast != nil {
 		a.Brake = m.coast.brake * a.Distance
+		a.Torqued = a.Brake
 		a.Air = -a.Kinetic - a.Climb - a.Rolling - a.Brake
 		return a
 	}

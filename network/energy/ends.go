@@ -13,6 +13,9 @@ func checkEnds(r *Run) Check {
 			continue
 		}
 		before, after := w.past(l, l.End)
+		if n := &r.Nodes[l.Node]; n.State >= 0 && n.Capacity == nil && !math.IsNaN(l.Seen) {
+			after = l.beyond(l.Seen) // what follows may heat it at once
+		}
 		if l.End > l.Start {
 			c.worst(before, l.Label) // beyond its mark
 		}
@@ -51,21 +54,31 @@ func (w *witness) furthest(l Leg) float64 {
 }
 
 // past returns how far past its mark the temperature of a leg is at a time; negative: not yet there. At the
-// end of a step it also tells how far it is when the next one starts: a node without mass may jump there.
+// end of a step it also tells how far it is just after.
 func (w *witness) past(l Leg, t float64) (before, after float64) {
 	tape := w.run.Tape
 	k, theta := tape.Find(t)
 	start, h, segment, coef := tape.Step(k)
 	w.at(start+theta*h, theta, segment, coef)
 	before = l.beyond(w.state.T[l.Node])
-	if theta < 1-1e-9 || k+1 == tape.Steps() {
+	if theta < 1-1e-9 {
 		return before, before
 	}
-	start, h, segment, coef = tape.Step(k + 1)
-	w.at(start+1e-9*h, 0, segment, coef)
-	after = l.beyond(w.state.T[l.Node])
-	w.at(t, theta, segment, coef)
-	return before, after
+	return before, l.beyond(w.next(l.Node, k, t))
+}
+
+// next returns the temperature of a node just after the end of step k, at time t: a held one may jump there by its
+// table, and one without mass with what heats it.
+func (w *witness) next(i, k int, t float64) float64 {
+	n, tape := &w.run.Nodes[i], w.run.Tape
+	switch {
+	case n.State < 0:
+		return w.tables[n.Signal-w.run.FirstTable].after(t)
+	case k+1 < tape.Steps():
+		_, _, _, coef := tape.Step(k + 1)
+		return w.temperature(i, coef[n.State])
+	}
+	return w.temperature(i, n.EndState)
 }
 
 // beyond returns how far past its mark a temperature is.

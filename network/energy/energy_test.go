@@ -102,8 +102,12 @@ func TestAccountByHand(t *testing.T) {
 		}, "matrix"},
 		{"a break within a step", func(r *Run) { r.Legs = []Leg{{Label: "l", End: 100, Node: -1, Corners: []float64{40}}} }, "breaks"},
 		{"a jump of a heat capacity within a step", func(r *Run) { r.Tape = lump(capacity, 29).Tape }, "breaks"},
-		{"a phase that ended late", func(r *Run) { r.Legs = []Leg{{Label: "l", End: 100, Node: 0, Target: 305, Ended: true}} }, "ends"},
-		{"a phase that ended early", func(r *Run) { r.Legs = []Leg{{Label: "l", End: 100, Node: 0, Target: 350, Ended: true}} }, "ends"},
+		{"a phase that ended late", func(r *Run) {
+			r.Legs = []Leg{{Label: "l", End: 100, Node: 0, Target: 305, Ended: true, Seen: math.NaN()}}
+		}, "ends"},
+		{"a phase that ended early", func(r *Run) {
+			r.Legs = []Leg{{Label: "l", End: 100, Node: 0, Target: 350, Ended: true, Seen: math.NaN()}}
+		}, "ends"},
 	} {
 		r := lump(capacity, 30)
 		c.set(r)

@@ -38,7 +38,10 @@ type Leg struct {
 	Falls      bool    // the until waits for a fall
 	Target     float64 // K
 	Ended      bool    // the until ended the leg
-	Corners    []float64
+	// Seen is the temperature [K] of a node without mass past its mark where the leg ended, or was left out, before
+	// a step could show it: at a jump of the drive. It is not a number otherwise.
+	Seen    float64
+	Corners []float64
 }
 
 // A Given is a source of known power over time: what it gives comes to Factor times the area of Power.
@@ -82,6 +85,7 @@ type Run struct {
 	Vehicle  *VehicleLine       // by the closed forms of its motion; nil when nothing moves
 	Road     Road               // what the vehicle's account is counted again from
 	Expected map[string]float64 // J of work by dissipator, from the vehicle's account
+	Torqued  float64            // share of the braking work that was taken under a constant torque
 }
 
 // A Road is a vehicle on its way.

@@ -117,3 +117,13 @@ func (s *store) value(x float64) float64 {
 	w := (x - s.x[i-1]) / (s.x[i] - s.x[i-1])
 	return (1-w)*s.c[i-1] + w*s.c[i]
 }
+
+// after returns the ordinate of the curve just past x: at a jump that on the right.
+func (s *store) after(x float64) float64 {
+	i := sort.Search(len(s.x), func(i int) bool { return s.x[i] > x })
+	if i == 0 || i == len(s.x) {
+		return s.value(x)
+	}
+	w := (x - s.x[i-1]) / (s.x[i] - s.x[i-1])
+	return (1-w)*s.c[i-1] + w*s.c[i]
+}

@@ -18,6 +18,7 @@ type survey struct {
 	steps    []int   // to be looked at, rising
 	swing    float64 // J, the largest stored gains or losses of all nodes together
 	softness float64 // J/K, energy that all nodes shift when every temperature is off
+	strain   float64 // J, energy that the paths carry over the run when every temperature is off by its tolerance
 	flowing  float64 // J, what round-off of the temperatures lets the paths carry unseen
 	rounding float64 // J, the same with the round-off of the end temperatures
 }
@@ -26,15 +27,17 @@ type survey struct {
 func (w *witness) survey() *survey {
 	s := &survey{}
 	s.spread(w.run)
-	s.extremes(w)
-	s.stiffness(w)
+	reach := s.extremes(w)
+	s.stiffness(w, reach)
 	w.slight = w.run.Rel * s.swing / float64(w.run.Tape.Steps()) // together a tenth of what the recount may miss
 	return s
 }
 
-// extremes finds the swing of every node, and marks the steps after which its state was highest and lowest.
-func (s *survey) extremes(w *witness) {
+// extremes finds the swing of every node, and marks the steps after which its state was highest and lowest. It
+// returns by node how far its temperature went [K].
+func (s *survey) extremes(w *witness) (reach []float64) {
 	tape := w.run.Tape
+	reach = make([]float64, len(w.run.Nodes))
 	for i := range w.run.Nodes {
 		n := &w.run.Nodes[i]
 		if n.State < 0 {
@@ -54,9 +57,11 @@ func (s *survey) extremes(w *witness) {
 		if n.Capacity != nil {
 			s.swing += math.Max(math.Max(high, -low), abs(n.EndState))
 		}
+		reach[i] = w.temperature(i, high) - w.temperature(i, low)
 		s.mark(atHigh)
 		s.mark(atLow)
 	}
+	return reach
 }
 
 // spread marks steps spread over the run, and two in the first leg of every label, so that every sort of drive
@@ -95,7 +100,7 @@ func (s *survey) mark(k int) {
 // stiffness finds how much heat the paths carry for a change of temperature: what a temperature's own
 // round-off makes of it cannot be told from nothing. The slopes are the equations' own; too large ones would
 // widen what is allowed, and fail the check of slopes.
-func (s *survey) stiffness(w *witness) {
+func (s *survey) stiffness(w *witness, reach []float64) {
 	r := w.run
 	y, hot := make([]float64, r.Tape.States()), 0.0
 	node := make([]float64, len(r.Nodes)) // W/K, the largest
@@ -121,6 +126,7 @@ func (s *survey) stiffness(w *witness) {
 	w.stiff = node
 	for i, n := range r.Nodes {
 		carried := node[i] * r.Tape.End() // J/K
+		s.strain += (r.Abs + r.Rel*reach[i]) * carried
 		s.flowing += epsilon * hot * carried
 		s.rounding += 4 * epsilon * hot * carried
 		if n.Capacity != nil {

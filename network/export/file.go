@@ -66,6 +66,12 @@ func replace(name string, write func(io.Writer) error) error {
 // place follows links to the file itself and returns its mode, zero if there is none yet.
 func place(name string) (target string, mode fs.FileMode, err error) {
 	if target, err = filepath.EvalSymlinks(name); err != nil {
+		if to, fault := os.Readlink(name); fault == nil && errors.Is(err, fs.ErrNotExist) { // to a file that is not there yet
+			if !filepath.IsAbs(to) {
+				to = filepath.Join(filepath.Dir(name), to)
+			}
+			return place(to)
+		}
 		if errors.Is(err, fs.ErrNotExist) {
 			return name, 0, nil
 		}

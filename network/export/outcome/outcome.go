@@ -32,6 +32,7 @@ type Run struct {
 	Warnings    []string
 	Caution     string // one plain line that stands wherever text can stand
 	Interrupted bool
+	Failure     string      // why the numbers failed before the end; empty: they did not
 	Settings    [][2]string // name and value, such as the method and the tolerance
 }
 
@@ -140,11 +141,15 @@ func (r *Run) Verdict() string {
 	return text
 }
 
-// Doubts returns what a reader must know before using any figure: an open energy book, an interrupted run.
+// Doubts returns what a reader must know before using any figure: an open energy book, a run that was interrupted
+// or failed.
 func (r *Run) Doubts() []string {
 	var doubts []string
 	if r.Interrupted {
 		doubts = append(doubts, fmt.Sprintf("the run was interrupted at %.6g s; what was recorded is shown", r.End))
+	}
+	if r.Failure != "" {
+		doubts = append(doubts, fmt.Sprintf("THE NUMBERS FAILED, and only what was recorded until %.6g s is shown: %s", r.End, r.Failure))
 	}
 	if r.Book != nil && !r.Book.Closed {
 		doubts = append(doubts, r.Verdict())
