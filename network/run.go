@@ -10,7 +10,6 @@ import (
 	"workheat/network/element"
 	"workheat/network/energy"
 	"workheat/network/record"
-	"workheat/network/unit"
 )
 
 // A runner carries one run through its duty.
@@ -125,6 +124,7 @@ func (r *runner) leg(ctx context.Context, leg *duty.Leg) (end float64, done bool
 			events = []ode.Event{r.event(u)}
 		}
 	}
+	braked := r.account.Brake
 	reason := r.motions(ctx, leg, events)
 	record.End, record.Ended, record.Seen = r.t, reason == ode.Passed, r.seen
 	for i := range leg.Motions {
@@ -133,15 +133,7 @@ func (r *runner) leg(ctx context.Context, leg *duty.Leg) (end float64, done bool
 		}
 	}
 	r.legs = append(r.legs, record)
-	if u := leg.Until; u != nil {
-		name, mark := r.model.Net.Nodes[u.Node].Name, unit.Temperature.Format(u.Temperature, 4)
-		switch {
-		case reason == ode.Reached && leg.Longest:
-			r.warn("%s: the longest time passed before %s came to %s", leg.Label, name, mark)
-		case reason == ode.Passed && r.t == leg.Start:
-			r.warn("%s took no time: %s had passed %s before it began", leg.Label, name, mark)
-		}
-	}
+	r.legWarnings(leg, reason, r.account.Brake-braked)
 	return r.t, reason == ode.Reached || reason == ode.Passed
 }
 

@@ -3,6 +3,8 @@ package network
 import (
 	"math"
 
+	"workheat/integrators/ode"
+	"workheat/network/duty"
 	"workheat/network/record"
 	"workheat/network/unit"
 )
@@ -23,6 +25,25 @@ const hottest = 4300
 func (r *runner) heatWarning(s record.Summary) {
 	if s.Highest > hottest {
 		r.warn("%s: no solid stands %s: check powers, masses, conductances and their units", s.Name, unit.Temperature.Format(s.Highest, 4))
+	}
+}
+
+// legWarnings says when a leg did not do what its author surely meant; brake is the work [J] that the
+// brakes took in it.
+func (r *runner) legWarnings(leg *duty.Leg, reason ode.Reason, brake float64) {
+	if leg.Brakes && reason == ode.Reached && brake == 0 {
+		r.warn("%s: the road and the air alone slow the vehicle as much as asked, so the brakes took no work", leg.Label)
+	}
+	u := leg.Until
+	if u == nil {
+		return
+	}
+	name, mark := r.model.Net.Nodes[u.Node].Name, unit.Temperature.Format(u.Temperature, 4)
+	switch {
+	case reason == ode.Reached && leg.Longest:
+		r.warn("%s: the longest time passed before %s came to %s", leg.Label, name, mark)
+	case reason == ode.Passed && r.t == leg.Start:
+		r.warn("%s took no time: %s had passed %s before it began", leg.Label, name, mark)
 	}
 }
 

@@ -126,7 +126,7 @@ func (c *Cursor) fill(p *Phase, end float64) {
 // plan lays out the leg of a phase from the present time and speed.
 func (c *Cursor) plan(p *Phase) {
 	l := c.begin(p.Label)
-	l.Until, l.phase = p.Until, p
+	l.Until, l.phase, l.Brakes = p.Until, p, p.Verb == Brake
 	length := p.length(c.program.Vehicle, c.speed)
 	l.End, l.Longest = c.time+length, p.Until != nil && length == p.AtMost
 	if c.program.Vehicle == nil {

@@ -82,6 +82,7 @@ type Leg struct {
 	Start   float64 // s
 	End     float64 // s, at the latest
 	Until   *Until
+	Brakes  bool     // it is a brake phase
 	Longest bool     // End is the longest time that the until may wait
 	Motions []Motion // cover Start to End; empty when nothing moves
 	Late    float64  // s by which a repeat's interval had to be lengthened before this leg
