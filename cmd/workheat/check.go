@@ -53,7 +53,7 @@ var formText = map[element.Form]string{element.Stored: "", element.Massless: "ma
 
 // printDescription prints the resolved network.
 func printDescription(w io.Writer, name string, model *network.Model) {
-	d := model.Describe()
+	d, name := model.Describe(), printable(name)
 	if t := model.Net.Title; t != "" {
 		name = t
 	}

@@ -83,13 +83,13 @@ func command(ctx context.Context, e env, args []string) int {
 	var c coded
 	if errors.As(err, &c) {
 		if c.text != "" {
-			fmt.Fprintln(e.err, "workheat:", c.text)
+			fmt.Fprintln(e.err, "workheat:", printable(c.text))
 		}
 		return c.code
 	}
-	fmt.Fprintln(e.err, "workheat:", err)
+	fmt.Fprintln(e.err, "workheat:", printable(err.Error()))
 	if len(args) > 0 && filepath.Ext(args[0]) == ".json" {
-		fmt.Fprintln(e.err, "to run a netlist: workheat run", args[0])
+		fmt.Fprintln(e.err, "to run a netlist: workheat run", printable(args[0]))
 		return exitProblem
 	}
 	fmt.Fprintln(e.err, "see workheat --help")

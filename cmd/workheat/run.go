@@ -163,7 +163,7 @@ func writeFiles(e env, src *source, opt runOptions, res *network.Result, every f
 			continue
 		}
 		if !opt.quiet {
-			fmt.Fprintf(e.err, "wrote %s\n", f)
+			fmt.Fprintf(e.err, "wrote %s\n", printable(f))
 		}
 	}
 	if faults != nil {
@@ -177,7 +177,7 @@ func title(res *network.Result, name string) string {
 	if t := res.Model.Net.Title; t != "" {
 		return t
 	}
-	return filepath.Base(name)
+	return printable(filepath.Base(name))
 }
 
 // allWarnings joins the netlist's warnings and the run's.

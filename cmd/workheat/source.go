@@ -7,6 +7,8 @@ import (
 	"io"
 	"os"
 	"path/filepath"
+	"strings"
+	"unicode"
 
 	"workheat/network/diag"
 )
@@ -105,4 +107,14 @@ func (w *checkedWriter) Write(p []byte) (int, error) {
 	n, err := w.to.Write(p)
 	w.err = err
 	return n, err
+}
+
+// printable returns text with a replacement sign for whatever could steer a terminal, such as in the name of a file.
+func printable(text string) string {
+	return strings.Map(func(r rune) rune {
+		if r == '\n' || r == '\t' || unicode.IsPrint(r) {
+			return r
+		}
+		return unicode.ReplacementChar
+	}, text)
 }

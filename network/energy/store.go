@@ -110,7 +110,7 @@ func (s *store) value(x float64) float64 {
 	if x <= s.x[0] {
 		return s.c[0]
 	}
-	if x >= s.x[last] {
+	if x > s.x[last] {
 		return s.c[last]
 	}
 	i := sort.SearchFloat64s(s.x, x) // x[i-1] < x <= x[i]
@@ -121,8 +121,11 @@ func (s *store) value(x float64) float64 {
 // after returns the ordinate of the curve just past x: at a jump that on the right.
 func (s *store) after(x float64) float64 {
 	i := sort.Search(len(s.x), func(i int) bool { return s.x[i] > x })
-	if i == 0 || i == len(s.x) {
-		return s.value(x)
+	if i == 0 {
+		return s.c[0]
+	}
+	if i == len(s.x) {
+		return s.c[i-1]
 	}
 	w := (x - s.x[i-1]) / (s.x[i] - s.x[i-1])
 	return (1-w)*s.c[i-1] + w*s.c[i]

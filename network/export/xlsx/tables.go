@@ -1,7 +1,10 @@
 package xlsx
 
 import (
+	"fmt"
 	"math"
+
+	"github.com/xuri/excelize/v2"
 
 	"workheat/network/export/outcome"
 	"workheat/network/record"
@@ -17,6 +20,10 @@ func (b *book) temperatures(s *record.Series) error {
 func (b *book) flows(s *record.Series) error {
 	return b.table(flowSheet, s, func(g record.Group) bool { return g != record.Temperatures })
 }
+
+// wide is the number of columns from which on the cells carry their formats themselves: the writer seeks the column of
+// each cell among those that have a format or a width, and its time would grow with the square of their number.
+const wide = 200
 
 // table writes time and the columns of the groups that are taken.
 func (b *book) table(name string, s *record.Series, take func(record.Group) bool) error {
@@ -37,7 +44,18 @@ func (b *book) table(name string, s *record.Series, take func(record.Group) bool
 		heads, styles = append(heads, outcome.Head(c.Name, c.Want)), append(styles, format)
 		columns, scales = append(columns, c.Values), append(scales, scale)
 	}
-	out := b.open(name, headRows, widthsFor(heads), styles)
+	if len(heads) > mostCols {
+		return fmt.Errorf("the sheet %q would need %d columns, and the most is %d: write .csv instead", name, len(heads), mostCols)
+	}
+	var ids []int // of the cells; nil: the columns have the formats
+	widths := widthsFor(heads)
+	if len(heads) > wide {
+		for _, format := range styles {
+			ids = append(ids, b.style(format))
+		}
+		widths, styles = nil, nil
+	}
+	out := b.open(name, headRows, widths, styles)
 	out.notice()
 	out.heads(heads...)
 	cells := make([]any, len(columns))
@@ -46,6 +64,9 @@ func (b *book) table(name string, s *record.Series, take func(record.Group) bool
 			cells[k] = nil
 			if v := scales[k].Show(values[i]); !math.IsNaN(v) && !math.IsInf(v, 0) {
 				cells[k] = v
+				if ids != nil {
+					cells[k] = excelize.Cell{StyleID: ids[k], Value: v}
+				}
 			}
 		}
 		out.add(cells...)

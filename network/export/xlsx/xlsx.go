@@ -28,6 +28,7 @@ const (
 const (
 	headRows = 2          // caution and header above the samples
 	mostRows = 1_048_576  // of a sheet, by the file format
+	mostCols = 16_384     // the same
 	mostText = 32_767 - 1 // characters in a cell, by the file format
 )
 

@@ -14,6 +14,7 @@ import (
 	"workheat/network/export/outcome"
 	"workheat/network/export/outcome/outcometest"
 	"workheat/network/record"
+	"workheat/network/unit"
 )
 
 func written(t *testing.T, o *outcome.Run) []byte {
@@ -320,5 +321,26 @@ func BenchmarkWrite(b *testing.B) {
 		if err := Write(io.Discard, o); err != nil {
 			b.Fatal(err)
 		}
+	}
+}
+
+// A wide table has its formats in the cells; one that is too wide for the file format is refused.
+func TestWideTables(t *testing.T) {
+	at := func(columns int) *outcome.Run {
+		return &outcome.Run{End: 1, Series: func(float64) *record.Series {
+			s := &record.Series{Time: []float64{0, 1}}
+			for i := range columns {
+				s.Columns = append(s.Columns, record.Column{Name: fmt.Sprint("n", i), Want: unit.Temperature, Values: []float64{300, 301.25}})
+			}
+			return s
+		}}
+	}
+	f := opened(t, written(t, at(wide+1)))
+	if got, _ := f.GetCellValue(tempSheet, "C4"); got != "28.1" {
+		t.Errorf("shown as %q, want 28.1", got)
+	}
+	var none bytes.Buffer
+	if err := Write(&none, at(mostCols)); err == nil || !strings.Contains(err.Error(), ".csv") {
+		t.Errorf("got %v, want a refusal", err)
 	}
 }
