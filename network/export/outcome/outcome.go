@@ -126,7 +126,8 @@ func (r *Run) Verdict() string {
 		return ""
 	}
 	if r.Book.Closed {
-		return fmt.Sprintf("the energy book is closed: %.3g J missing of a throughput of %.6g J", r.Book.LedgerGap, r.Book.Throughput)
+		return fmt.Sprintf("The energy book is closed: %.2g J missing by the ledger and %.2g J by the recount, of %.6g J through the border",
+			r.Book.LedgerGap, r.Book.IndependentGap, r.Book.Throughput)
 	}
 	var failed []string
 	for _, c := range r.Book.Checks {

@@ -161,7 +161,7 @@ func TestSummaryHoldsPeaksMarginsAndWarnings(t *testing.T) {
 	}
 	find(t, f, "Summary", "Warnings: 1")
 	find(t, f, "Summary", o.Warnings[0])
-	find(t, f, "Summary", "the energy book is closed")
+	find(t, f, "Summary", "The energy book is closed")
 	find(t, f, "Summary", "node 3 (held)")
 }
 
