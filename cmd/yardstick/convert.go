@@ -61,7 +61,51 @@ func readProblem(text []byte) (*problem, error) {
 	if len(p.Mech) > 0 {
 		return nil, fmt.Errorf("%s has a mechanical part, which a netlist cannot say", p.Name)
 	}
-	return p, nil
+	return p, p.check()
+}
+
+// check looks whether all columns of a part are of one length, refer only to what is there, and hold a run.
+func (p *problem) check() error {
+	seg := &p.Segment
+	n := len(p.Node.C0)
+	for _, c := range []struct {
+		what string
+		ok   bool
+	}{
+		{"node", same(n, len(p.Node.C1), len(p.Node.T0)) && n > 0},
+		{"link", same(len(p.Link.A), len(p.Link.B), len(p.Link.G)) && within(p.Link.A, n) && within(p.Link.B, n)},
+		{"conv", same(len(p.Conv.Node), len(p.Conv.Bnd), len(p.Conv.A), len(p.Conv.H0), len(p.Conv.H1)) &&
+			within(p.Conv.Node, n) && within(p.Conv.Bnd, len(p.Boundary.T))},
+		{"rad", same(len(p.Rad.Node), len(p.Rad.Bnd), len(p.Rad.EA)) && within(p.Rad.Node, n) && within(p.Rad.Bnd, len(p.Boundary.T))},
+		{"heat", same(len(p.Heat.Node), len(p.Heat.Share)) && within(p.Heat.Node, n)},
+		{"segment", same(len(seg.T), len(seg.P0)+1, len(seg.P1)+1, len(seg.V0)+1, len(seg.V1)+1) && len(seg.T) > 1},
+		{"probe", within(p.Probe, n)},
+		{"t_end", p.End > 0 && p.DtOut > 0 && p.End/p.DtOut < 1e9},
+	} {
+		if !c.ok {
+			return fmt.Errorf("the part %q of the problem does not fit together", c.what)
+		}
+	}
+	return nil
+}
+
+func same(lengths ...int) bool {
+	for _, n := range lengths {
+		if n != lengths[0] {
+			return false
+		}
+	}
+	return true
+}
+
+// within reports whether all indices lie in [0, n).
+func within(indices []int, n int) bool {
+	for _, i := range indices {
+		if i < 0 || i >= n {
+			return false
+		}
+	}
+	return true
 }
 
 // A writer builds a netlist's text.
