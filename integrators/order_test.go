@@ -111,7 +111,7 @@ func TestDenseOrder(t *testing.T) {
 	for _, m := range integrators.Methods {
 		for _, index1 := range []bool{false, true} {
 			c := mildCase(index1)
-			coarse, fine := denseErrors(t, m, c, 0.05), denseErrors(t, m, c, 0.025)
+			coarse, fine := denseErrors(t, m, c, 0.008), denseErrors(t, m, c, 0.004)
 			for i := range coarse {
 				got, want := observed(coarse[i], fine[i]), float64(m.Degree())+0.8
 				if c.Mass != nil && c.Mass[i] == 0 {
