@@ -1,6 +1,6 @@
 module workheat
 
-go 1.26.8
+go 1.26.0
 
 require (
 	github.com/goccy/go-json v0.12.0

@@ -76,7 +76,7 @@ func TestSumsStay(t *testing.T) {
 		for _, c := range problems.All() {
 			for _, w := range c.Sums {
 				want := dot(w, c.Start)
-				_, err := solve(c, m, c.Bind(c.Relative(), false), ode.Tolerance{Abs: 1e-5}, 10*stepBound(c, m, 1e-5), func(k int, y []float64) {
+				_, err := solve(c, m, c.Bind(c.Relative(), false), ode.Tolerance{Abs: 1e-5}, 10*stepBound(c, 1e-5), func(k int, y []float64) {
 					if got := dot(w, y); math.Abs(got-want) > 1e-12*math.Abs(want) {
 						t.Errorf("%s, %s, t = %g: the relation is %.16g, was %.16g", m.Name(), c.Name, c.Answers[k].T, got, want)
 					}

@@ -82,10 +82,10 @@ func (r *runner) flowsOf(i int, q []float64) string {
 // their ends, a node that stores heat or is held.
 func (r *runner) anchored(start int, t float64, y []float64) bool {
 	dep, _ := r.model.system.PathSlopes(t, y)
-	seen, todo := map[int]bool{start: true}, []int{start}
-	for len(todo) > 0 {
-		i := todo[len(todo)-1]
-		todo = todo[:len(todo)-1]
+	seen, ahead := map[int]bool{start: true}, []int{start}
+	for len(ahead) > 0 {
+		i := ahead[len(ahead)-1]
+		ahead = ahead[:len(ahead)-1]
 		if r.model.Net.Nodes[i].Form != element.Massless {
 			return true
 		}
@@ -96,7 +96,7 @@ func (r *runner) anchored(start int, t float64, y []float64) bool {
 				continue
 			}
 			seen[other] = true
-			todo = append(todo, other)
+			ahead = append(ahead, other)
 		}
 	}
 	return false

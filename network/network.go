@@ -74,7 +74,7 @@ type Result struct {
 	Book        *energy.Book     // nil without Options.Audit, or when no step was taken
 	Stats       ode.Stats
 	Warnings    []string
-	Interrupted bool
+	Interrupted bool         // the run, or its second one at a tenth of the tolerance
 	Failure     *ode.Failure // nil unless the numbers failed; what was recorded before is kept
 
 	motions []motion // of the segments

@@ -27,6 +27,7 @@ type runner struct {
 	observe ode.Observer
 	jumpers []jumper // nodes whose heat capacity jumps
 	seen    float64  // K, for the book's Leg.Seen
+	delays  []delay
 
 	// What tests may break on purpose; false in every real run.
 	dropEvents bool
@@ -78,7 +79,7 @@ func (r *runner) run(ctx context.Context, opt Options) *Result {
 			break
 		}
 		if leg.Late > 0 {
-			r.warn("%s begins %.3g s late: what comes before takes longer than its interval", leg.Label, leg.Late)
+			r.late(leg)
 		}
 		end, done := r.leg(ctx, leg)
 		r.cursor.Done(end)
@@ -93,6 +94,7 @@ func (r *runner) run(ctx context.Context, opt Options) *Result {
 	res.End = r.t
 	res.Stats = r.integ.Stats()
 	r.summarise()
+	r.lateWarnings()
 	r.rangeWarnings()
 	if opt.Audit && res.Tape.Steps() > 0 {
 		res.Book = energy.Make(r.evidence())
@@ -262,6 +264,7 @@ func (r *runner) toleranceCheck(ctx context.Context) {
 	finer := r.model.Run(ctx, Options{Rel: res.Rel / 10, Abs: res.Abs / 10})
 	if finer.Failure != nil || finer.Interrupted {
 		r.warn("the run at a tenth of the tolerance did not come to its end")
+		res.Interrupted = finer.Interrupted
 		return
 	}
 	var names []string

@@ -2,6 +2,7 @@ package network
 
 import (
 	"math"
+	"slices"
 
 	"workheat/integrators/ode"
 	"workheat/network/duty"
@@ -25,6 +26,33 @@ const hottest = 4300
 func (r *runner) heatWarning(s record.Summary) {
 	if s.Highest > hottest {
 		r.warn("%s: no solid stands %s: check powers, masses, conductances and their units", s.Name, unit.Temperature.Format(s.Highest, 4))
+	}
+}
+
+// A delay is how late the legs of one label began, because what comes before takes longer than its interval.
+type delay struct {
+	label string
+	times int
+	most  float64 // s
+}
+
+// late takes note of a leg that begins late.
+func (r *runner) late(leg *duty.Leg) {
+	i := slices.IndexFunc(r.delays, func(d delay) bool { return d.label == leg.Label })
+	if i < 0 {
+		i = len(r.delays)
+		r.delays = append(r.delays, delay{label: leg.Label})
+	}
+	d := &r.delays[i]
+	d.times++
+	d.most = math.Max(d.most, leg.Late)
+}
+
+// lateWarnings says once for each label how often and how much its legs were late: a round may be late by
+// another amount each time.
+func (r *runner) lateWarnings() {
+	for _, d := range r.delays {
+		r.warn("%s began late %d times, by up to %.3g s: what comes before takes longer than its interval", d.label, d.times, d.most)
 	}
 }
 
